@@ -1,0 +1,119 @@
+using System.Numerics;
+
+namespace Fusecraft.Permutations;
+
+public readonly partial struct Permutation : IMultiplyOperators<Permutation, Permutation, Permutation>, IMultiplicativeIdentity<Permutation, Permutation>,
+    IEqualityOperators<Permutation, Permutation, bool>
+{
+    /// <inheritdoc/>
+    static Permutation IMultiplicativeIdentity<Permutation, Permutation>.MultiplicativeIdentity => default;
+
+    /// <summary>First <paramref name="left"/>, then <paramref name="right"/>: <c>(left * right)[i] == right[left[i]]</c>.</summary>
+    public static Permutation operator *(Permutation left, Permutation right) => Multiply(left, right);
+
+    /// <summary>True when both move every point alike; trailing fixed points do not matter.</summary>
+    public static bool operator ==(Permutation left, Permutation right) => left.Equals(right);
+
+    /// <summary>True when some point has two different images.</summary>
+    public static bool operator !=(Permutation left, Permutation right) => !left.Equals(right);
+
+    /// <summary>The product <c>left * right</c>: first <paramref name="left"/>, then <paramref name="right"/>.</summary>
+    public static Permutation Multiply(Permutation left, Permutation right)
+    {
+        if (left._lanes is null)
+        {
+            return right;
+        }
+
+        if (right._lanes is null)
+        {
+            return left;
+        }
+
+        var degree = Math.Max(left.SupportEnd, right.SupportEnd);
+        return degree <= 256 ? Multiply<byte>(left, right, degree) : Multiply<ushort>(left, right, degree);
+    }
+
+    /// <summary>This permutation followed by another: the same as <c>this * next</c>.</summary>
+    public Permutation Then(Permutation next) => Multiply(this, next);
+
+    /// <summary>The permutation that undoes this one.</summary>
+    public Permutation Inverse() => SupportEnd switch
+    {
+        0 => default,
+        <= 256 and var degree => Invert<byte>(degree),
+        var degree => Invert<ushort>(degree),
+    };
+
+    /// <summary>This permutation done <paramref name="exponent"/> times; negative exponents undo it. Takes time in the degree only, whatever the exponent.</summary>
+    public Permutation Power(BigInteger exponent)
+    {
+        var degree = SupportEnd;
+        var images = new int[degree];
+        var cycle = new int[degree];
+        var seen = new bool[degree];
+        for (var start = 0; start < degree; start++)
+        {
+            var length = 0;
+            for (var point = start; !seen[point]; point = Image(point))
+            {
+                seen[point] = true;
+                cycle[length++] = point;
+            }
+
+            if (length == 0)
+            {
+                continue;
+            }
+
+            var shift = (int)BigInteger.Remainder(exponent, length);
+            shift = shift < 0 ? shift + length : shift;
+            for (var i = 0; i < length; i++)
+            {
+                images[cycle[i]] = cycle[(i + shift) % length];
+            }
+        }
+
+        return FromTrustedImages<int>(images);
+    }
+
+    /// <summary>The conjugate <c>by⁻¹ * this * by</c>: the same permutation with every point <c>i</c> renamed <c>by[i]</c>.</summary>
+    public Permutation ConjugateBy(Permutation by)
+    {
+        var degree = Math.Max(SupportEnd, by.SupportEnd);
+        var images = new int[degree];
+        for (var i = 0; i < degree; i++)
+        {
+            images[by.Image(i)] = by.Image(Image(i));
+        }
+
+        return FromTrustedImages<int>(images);
+    }
+
+    /// <summary>The commutator <c>first * second * first⁻¹ * second⁻¹</c>, in the order in which turn words are read; the identity exactly when the two commute.</summary>
+    public static Permutation Commutator(Permutation first, Permutation second) => first * second * (second * first).Inverse();
+
+    private static Permutation Multiply<T>(Permutation left, Permutation right, int degree)
+        where T : unmanaged, IBinaryInteger<T>
+    {
+        using var scratch = new Scratch<T>(3 * degree);
+        var p = scratch.Span[..degree];
+        var q = scratch.Span.Slice(degree, degree);
+        var r = scratch.Span[(2 * degree)..];
+        left.CopyLanes(p);
+        right.CopyLanes(q);
+        Lanes.Compose<T>(p, q, r);
+        return FromTrustedImages<T>(r);
+    }
+
+    private Permutation Invert<T>(int degree)
+        where T : unmanaged, IBinaryInteger<T>
+    {
+        using var scratch = new Scratch<T>(2 * degree);
+        var p = scratch.Span[..degree];
+        var r = scratch.Span[degree..];
+        CopyLanes(p);
+        Lanes.Invert<T>(p, r);
+        return FromTrustedImages<T>(r);
+    }
+}
