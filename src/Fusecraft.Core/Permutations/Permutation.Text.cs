@@ -6,13 +6,16 @@ public readonly partial struct Permutation : ISpanParsable<Permutation>, ISpanFo
 {
     /// <summary>Reads disjoint cycles of 1-based numbers, such as <c>(1 2 3)(5 6)</c>. For named points see <see cref="CycleNotation"/>.</summary>
     /// <exception cref="FormatException">The text is not a product of disjoint cycles; the message says where.</exception>
-    public static Permutation Parse(string s, IFormatProvider? provider = null)
+    public static Permutation Parse(string s)
     {
         ArgumentNullException.ThrowIfNull(s);
         return CycleNotation.Numbers.Parse(s);
     }
 
-    /// <inheritdoc cref="Parse(string, IFormatProvider)"/>
+    /// <inheritdoc cref="Parse(string)"/>
+    public static Permutation Parse(string s, IFormatProvider? provider) => Parse(s);
+
+    /// <inheritdoc cref="Parse(string)"/>
     public static Permutation Parse(ReadOnlySpan<char> s, IFormatProvider? provider) => CycleNotation.Numbers.Parse(s);
 
     /// <summary>Reads disjoint cycles of 1-based numbers; false where the text is none.</summary>
