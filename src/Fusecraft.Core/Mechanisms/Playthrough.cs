@@ -1,0 +1,262 @@
+using System.Runtime.CompilerServices;
+using Fusecraft.Permutations;
+
+namespace Fusecraft.Mechanisms;
+
+/// <summary>
+/// A cursor on a mechanism for game loops: try steps, take them back, ask which are free. The one mutable type of the library; not safe to share between threads.
+/// </summary>
+/// <remarks>Steps are given by their numbers in <see cref="Mechanism.Steps"/>. No method on the way of a step allocates, except when the history outgrows its capacity.</remarks>
+public sealed class Playthrough
+{
+    private readonly StepMoves[] _moves;
+    private readonly int[][] _cycles;
+    private readonly int[] _labels;
+    private ulong[] _key;
+    private ulong[] _next;
+    private ushort[] _history;
+
+    /// <summary>Starts at home.</summary>
+    /// <param name="mechanism">The mechanism to play.</param>
+    public Playthrough(Mechanism mechanism)
+        : this((mechanism ?? throw new ArgumentNullException(nameof(mechanism))).HomeState)
+    {
+    }
+
+    /// <summary>Starts at a state.</summary>
+    /// <param name="start">A state with a shape; <see cref="Reset"/> comes back to it.</param>
+    /// <param name="historyCapacity">How many steps fit before the history grows.</param>
+    /// <exception cref="ArgumentException">The state has no shape.</exception>
+    public Playthrough(State start, int historyCapacity = 1024)
+    {
+        ArgumentNullException.ThrowIfNull(start);
+        ArgumentOutOfRangeException.ThrowIfNegative(historyCapacity);
+        if (start.Shape is null)
+        {
+            throw new ArgumentException("The state lies where no turns can bring the puzzle, so it cannot be played.", nameof(start));
+        }
+
+        Start = start;
+        Mechanism = start.Mechanism;
+        _moves = Mechanism.Board.Moves.ToArray();
+        _cycles = [.. Mechanism.Steps.Select(step => Flatten(step.Permutation))];
+        _labels = new int[Mechanism.SiteCount];
+        _key = new ulong[Mechanism.Board.Words];
+        _next = new ulong[_key.Length];
+        _history = new ushort[historyCapacity];
+        Reset();
+    }
+
+    /// <summary>The mechanism that is played.</summary>
+    public Mechanism Mechanism { get; }
+
+    /// <summary>The state the play started from.</summary>
+    public State Start { get; }
+
+    /// <summary>The number of steps done and not taken back.</summary>
+    public int StepCount { get; private set; }
+
+    /// <summary>The number of steps that <see cref="Redo"/> can do again.</summary>
+    public int RedoCount { get; private set; }
+
+    /// <summary>For each site, the label that is on it now; labels are named by their home sites. Changes with every step.</summary>
+    public ReadOnlySpan<int> Labels => _labels;
+
+    /// <summary>The state now, as an immutable value. Allocates.</summary>
+    public State State => new(Mechanism, Permutation.FromSources(_labels), new Shape(Mechanism, _key));
+
+    /// <summary>True when every label is home.</summary>
+    public bool IsHome
+    {
+        get
+        {
+            for (var site = 0; site < _labels.Length; site++)
+            {
+                if (_labels[site] != site)
+                {
+                    return false;
+                }
+            }
+
+            return true;
+        }
+    }
+
+    /// <summary>True when the step is free now.</summary>
+    /// <param name="step">The number of a step.</param>
+    /// <exception cref="IndexOutOfRangeException">There is no such step.</exception>
+    public bool IsFree(int step) => _moves[step].IsFree(_key);
+
+    /// <summary>What bars the step now, or null when it is free. Allocates.</summary>
+    /// <param name="step">The number of a step.</param>
+    public Barrier? WhyBarred(int step) => new Shape(Mechanism, _key).WhyBarred(Mechanism.Steps[step]);
+
+    /// <summary>Does a step if it is free; forgets the steps that could have been done again. Constant time in the number of sites moved.</summary>
+    /// <param name="step">The number of a step.</param>
+    /// <returns>False, and nothing changes, where the step is barred.</returns>
+    /// <exception cref="IndexOutOfRangeException">There is no such step.</exception>
+    public bool TryStep(int step)
+    {
+        if (!_moves[step].IsFree(_key))
+        {
+            return false;
+        }
+
+        Do(step);
+        if (StepCount == _history.Length)
+        {
+            Array.Resize(ref _history, Math.Max(64, 2 * _history.Length));
+        }
+
+        _history[StepCount++] = (ushort)step;
+        RedoCount = 0;
+        return true;
+    }
+
+    /// <summary>Does a step if it is free.</summary>
+    /// <param name="step">A step of this mechanism.</param>
+    /// <returns>False, and nothing changes, where the step is barred.</returns>
+    public bool TryStep(Step step)
+    {
+        ArgumentNullException.ThrowIfNull(step);
+        Mechanism.Board.Of(step);
+        return TryStep(step.Index);
+    }
+
+    /// <summary>Writes the numbers of the steps that are free now, ascending.</summary>
+    /// <param name="steps">Room for them; the number of steps of the mechanism is always enough.</param>
+    /// <returns>How many steps are free.</returns>
+    /// <exception cref="ArgumentException">There is not enough room.</exception>
+    public int FreeSteps(Span<int> steps)
+    {
+        var count = 0;
+        for (var step = 0; step < _moves.Length; step++)
+        {
+            if (_moves[step].IsFree(_key))
+            {
+                if (count == steps.Length)
+                {
+                    throw new ArgumentException($"There is room for {steps.Length} steps, and more are free; room for {_moves.Length} is always enough.", nameof(steps));
+                }
+
+                steps[count++] = step;
+            }
+        }
+
+        return count;
+    }
+
+    /// <summary>Takes the last step back. This is not a step: it works where the opposite step is barred, too.</summary>
+    /// <returns>False at the start.</returns>
+    public bool Undo()
+    {
+        if (StepCount == 0)
+        {
+            return false;
+        }
+
+        UndoStep(_history[--StepCount]);
+        RedoCount++;
+        return true;
+    }
+
+    /// <summary>Does the step again that was taken back last.</summary>
+    /// <returns>False where none was taken back since the last step.</returns>
+    public bool Redo()
+    {
+        if (RedoCount == 0)
+        {
+            return false;
+        }
+
+        Do(_history[StepCount++]);
+        RedoCount--;
+        return true;
+    }
+
+    /// <summary>Goes back to the start and forgets all steps.</summary>
+    public void Reset()
+    {
+        Start.Labels.Inverse().CopyImages(_labels);
+        Start.Shape!.Key.CopyTo(_key);
+        StepCount = 0;
+        RedoCount = 0;
+    }
+
+    /// <summary>The play so far as an immutable value from which it can be restored. Allocates.</summary>
+    public SavedPlaythrough Save() => new(Start.Labels, [.. _history.AsSpan(0, StepCount + RedoCount)], StepCount);
+
+    /// <summary>Continues a saved play.</summary>
+    /// <param name="mechanism">The mechanism it was played on.</param>
+    /// <param name="saved">What <see cref="Save"/> gave.</param>
+    /// <exception cref="ArgumentException">The saved play does not fit the mechanism: its start has no shape, or one of its steps is barred.</exception>
+    public static Playthrough Restore(Mechanism mechanism, SavedPlaythrough saved)
+    {
+        ArgumentNullException.ThrowIfNull(mechanism);
+        ArgumentNullException.ThrowIfNull(saved);
+        var play = new Playthrough(mechanism.StateOf(saved.Start), Math.Max(1024, saved.Steps.Length));
+        for (var i = 0; i < saved.Steps.Length; i++)
+        {
+            if (saved.Steps[i] >= mechanism.Steps.Length || !play.TryStep(saved.Steps[i]))
+            {
+                throw new ArgumentException($"Step {i + 1} of the saved play is number {saved.Steps[i]}, which cannot be done there; the play belongs to another mechanism.", nameof(saved));
+            }
+        }
+
+        while (play.StepCount > saved.Position)
+        {
+            play.Undo();
+        }
+
+        return play;
+    }
+
+    // Cycles one after the other, each preceded by its length.
+    private static int[] Flatten(Permutation permutation)
+    {
+        var flat = new List<int>();
+        foreach (var cycle in permutation.Cycles())
+        {
+            flat.Add(cycle.Length);
+            flat.AddRange(cycle);
+        }
+
+        return [.. flat];
+    }
+
+    private void Do(int step)
+    {
+        _moves[step].Move(_key, _next);
+        (_key, _next) = (_next, _key);
+        var cycles = _cycles[step];
+        for (var at = 0; at < cycles.Length; at += cycles[at] + 1)
+        {
+            var last = at + cycles[at];
+            var carried = _labels[cycles[last]];
+            for (var i = last; i > at + 1; i--)
+            {
+                _labels[cycles[i]] = _labels[cycles[i - 1]];
+            }
+
+            _labels[cycles[at + 1]] = carried;
+        }
+    }
+
+    private void UndoStep(int step)
+    {
+        _moves[step].MoveBack(_key, _next);
+        (_key, _next) = (_next, _key);
+        var cycles = _cycles[step];
+        for (var at = 0; at < cycles.Length; at += cycles[at] + 1)
+        {
+            var last = at + cycles[at];
+            var carried = _labels[cycles[at + 1]];
+            for (var i = at + 1; i < last; i++)
+            {
+                _labels[cycles[i]] = _labels[cycles[i + 1]];
+            }
+
+            _labels[cycles[last]] = carried;
+        }
+    }
+}
