@@ -8,7 +8,7 @@ namespace Fusecraft.Permutations;
 /// Span kernels for permutations held as image lists, one lane a point. Written once for lanes of one byte (degree up to 256) and
 /// of two bytes (degree up to 65,536). Callers guarantee valid permutations of equal degree; only Debug builds check.
 /// </summary>
-internal static class Lanes
+internal static partial class Lanes
 {
     /// <summary>Fills <paramref name="images"/> with the identity.</summary>
     public static void Identity<T>(Span<T> images)

@@ -96,14 +96,14 @@ public readonly partial struct Permutation : IMultiplyOperators<Permutation, Per
     private static Permutation Multiply<T>(Permutation left, Permutation right, int degree)
         where T : unmanaged, IBinaryInteger<T>
     {
-        using var scratch = new Scratch<T>(3 * degree);
-        var p = scratch.Span[..degree];
-        var q = scratch.Span.Slice(degree, degree);
-        var r = scratch.Span[(2 * degree)..];
+        var length = Lanes.PaddedLength(degree);
+        using var scratch = new Scratch<T>(2 * length);
+        var p = scratch.Span[..length];
+        var q = scratch.Span[length..];
         left.CopyLanes(p);
         right.CopyLanes(q);
-        Lanes.Compose<T>(p, q, r);
-        return FromTrustedImages<T>(r);
+        Lanes.ComposePadded<T>(p, q, p);
+        return FromTrustedImages<T>(p);
     }
 
     private Permutation Invert<T>(int degree)

@@ -1,6 +1,7 @@
 using System.Diagnostics;
 using System.Diagnostics.CodeAnalysis;
 using System.Numerics;
+using System.Runtime.InteropServices;
 
 namespace Fusecraft.Permutations;
 
@@ -126,7 +127,7 @@ public readonly partial struct Permutation : IEquatable<Permutation>
         switch (_lanes)
         {
             case byte[] narrow: hash.AddBytes(narrow); break;
-            case ushort[] wide: hash.AddBytes(System.Runtime.InteropServices.MemoryMarshal.AsBytes(wide.AsSpan())); break;
+            case ushort[] wide: hash.AddBytes(MemoryMarshal.AsBytes(wide.AsSpan())); break;
         }
 
         return hash.ToHashCode();
@@ -182,6 +183,12 @@ public readonly partial struct Permutation : IEquatable<Permutation>
         where TFrom : unmanaged, IBinaryInteger<TFrom>
         where TTo : unmanaged, IBinaryInteger<TTo>
     {
+        if (typeof(TFrom) == typeof(TTo))
+        {
+            MemoryMarshal.Cast<TFrom, TTo>(from).CopyTo(to);
+            return;
+        }
+
         for (var i = 0; i < from.Length; i++)
         {
             to[i] = TTo.CreateTruncating(from[i]);

@@ -1,0 +1,55 @@
+using System.Numerics;
+using Fusecraft.Permutations;
+
+namespace Fusecraft.Groups;
+
+/// <summary>The levels of a stabilizer chain, whatever the width of their lanes.</summary>
+internal abstract class ChainTables
+{
+    /// <summary>Points are 0 … Degree-1.</summary>
+    public abstract int Degree { get; }
+
+    public abstract int Count { get; }
+
+    public abstract int BasePoint(int level);
+
+    public abstract int OrbitLength(int level);
+
+    public abstract int OrbitPoint(int level, int index);
+
+    public abstract int OrbitIndex(int level, int point);
+
+    /// <summary>The stored representative that takes the base point to an orbit point, which must be one.</summary>
+    public abstract Permutation Representative(int level, int point);
+
+    public abstract IEnumerable<Permutation> Generators(int level);
+
+    /// <summary>True when the permutation is a product of representatives. Without allocation.</summary>
+    public abstract bool Contains(Permutation permutation);
+
+    /// <summary>Strips representatives off until a base point leaves its orbit, at the level given back; the number of levels when none does.</summary>
+    public abstract int Sift(Permutation permutation, out Permutation residue);
+
+    /// <summary>The place of the image of each base point among the possible ones in ascending order, given the earlier images. False when the permutation is no member.</summary>
+    public abstract bool TryGetDigits(Permutation permutation, Span<int> digits);
+
+    /// <summary>The member with the given digits; see <see cref="TryGetDigits"/>.</summary>
+    public abstract Permutation FromDigits(ReadOnlySpan<int> digits);
+
+    /// <summary>The chain of the stabilizer of the first base points; it shares the levels.</summary>
+    public abstract ChainTables Below(int level);
+
+    public BigInteger Order
+    {
+        get
+        {
+            var order = BigInteger.One;
+            for (var level = 0; level < Count; level++)
+            {
+                order *= OrbitLength(level);
+            }
+
+            return order;
+        }
+    }
+}
