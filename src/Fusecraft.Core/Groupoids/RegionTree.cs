@@ -75,6 +75,14 @@ internal sealed class RegionTree
         return new RegionTree(groupoid, root, order, parents, steps);
     }
 
+    /// <summary>The tree of the exploration itself, over all regions.</summary>
+    public static RegionTree OfAll(ShapeGroupoid groupoid)
+    {
+        var count = groupoid.ShapeCount;
+        var shapes = Enumerable.Range(0, count);
+        return new RegionTree(groupoid, 0, [.. shapes], [.. shapes.Select(groupoid.Parent)], [.. shapes.Select(groupoid.ParentStep)]);
+    }
+
     /// <summary>The steps from the root to a shape; null where it lies in another region.</summary>
     public ImmutableArray<Step>? PathTo(int shape)
     {

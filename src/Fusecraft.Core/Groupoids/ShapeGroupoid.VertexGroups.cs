@@ -15,9 +15,6 @@ public sealed partial class ShapeGroupoid
     public VertexGroup VertexGroupAt(int shape, CancellationToken cancellationToken = default)
     {
         RequireShape(shape);
-        var tree = RegionTree.Of(this, shape);
-        return Mechanism.SiteCount <= 256
-            ? new VertexGroupExtraction<byte>(this, tree, cancellationToken).Run()
-            : new VertexGroupExtraction<ushort>(this, tree, cancellationToken).Run();
+        return VertexGroupExtraction.Run(this, RegionTree.Of(this, shape), cancellationToken);
     }
 }

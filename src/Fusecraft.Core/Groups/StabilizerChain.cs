@@ -134,6 +134,38 @@ public sealed class StabilizerChain
         return residue;
     }
 
+    /// <summary>
+    /// A member that takes each of some points to a given one, or null where there is none. The base must begin with those of the points that are not fixed by the ones before.
+    /// </summary>
+    /// <param name="points">The points that were given as base prefix.</param>
+    /// <param name="images">Where each of them is to go.</param>
+    internal Permutation? MemberTaking(ReadOnlySpan<int> points, ReadOnlySpan<int> images)
+    {
+        // member = (deeper representatives) * representative, so what is left to reach is the image before the representative.
+        var member = Permutation.Identity;
+        var level = 0;
+        for (var i = 0; i < points.Length; i++)
+        {
+            var image = member.Inverse()[images[i]];
+            if (level < Base.Length && Base[level] == points[i])
+            {
+                if (_tables.OrbitIndex(level, image) < 0)
+                {
+                    return null;
+                }
+
+                member = _tables.Representative(level, image) * member;
+                level++;
+            }
+            else if (image != points[i])
+            {
+                return null;
+            }
+        }
+
+        return member;
+    }
+
     /// <summary>The chain of the subgroup that fixes the base points before a level. It shares this chain's tables.</summary>
     /// <param name="level">0 … number of levels; the last gives the trivial group's chain.</param>
     /// <param name="isLexicographic">Whether the base points from that level on ascend and come first among the points that they leave.</param>

@@ -47,6 +47,9 @@ public sealed class Turn
 
     internal bool HasOwnBackGuard { get; }
 
+    /// <summary>True when something besides torn blocks can bar the forward step.</summary>
+    internal bool HasGuard => Forward.Terms.All(term => term.Needs.Length + term.BarredBy.Length > 0);
+
     /// <inheritdoc/>
     public override string ToString() => Name;
 

@@ -1,0 +1,163 @@
+using Fusecraft.Groupoids;
+using Fusecraft.Groups;
+using Fusecraft.Mechanisms;
+using Fusecraft.Permutations;
+
+namespace Fusecraft.Solving;
+
+// Paths between two states, every label counting.
+public sealed partial class Solver
+{
+    private SolveResult RouteStates(State from, State to, IProgress<SolveProgress>? progress, CancellationToken cancellation)
+    {
+        if (from == to)
+        {
+            return SolveResult.Shortest(from.Shape is null ? TurnPath.At(Mechanism.Home) : TurnPath.At(from.Shape));
+        }
+
+        if (IsOffBoard(from, "starts", out var reason) || IsOffBoard(to, "ends", out reason))
+        {
+            return SolveResult.Impossible(reason);
+        }
+
+        var search = new StateSearch(Mechanism, cancellation);
+        search.AddStart(from.Shape!, LabelsOn(from));
+        search.AddGoal(to.Shape!, LabelsOn(to));
+        progress?.Report(new SolveProgress("searching nearby", 0));
+        if (Search(Math.Min(FirstLook, Options.MaxStates)) is { } near)
+        {
+            return near;
+        }
+
+        progress?.Report(new SolveProgress("exploring shapes", 0));
+        var proof = Prove(from, to, cancellation);
+        if (proof.Impossible is not null)
+        {
+            return SolveResult.Impossible(proof.Impossible);
+        }
+
+        progress?.Report(new SolveProgress("searching", search.StateCount));
+        if (Search(Options.MaxStates) is { } far)
+        {
+            return far;
+        }
+
+        if (proof.Context is null)
+        {
+            return SolveResult.Unsettled($"{proof.Unsettled} A search found no path of fewer than {search.LowerBound} steps before its budget of {Options.MaxStates} states ended.");
+        }
+
+        progress?.Report(new SolveProgress("making words", 0));
+        return Long(from, to, proof.Context, search.LowerBound, cancellation);
+
+        SolveResult? Search(int maxStates) => search.Run(maxStates, Options.MaxLength) switch
+        {
+            StateSearch.Outcome.Found => SolveResult.Shortest(Replayed(from, search.Path, end => end == to)),
+            StateSearch.Outcome.NoPath => SolveResult.Impossible("A search has seen every state that can be reached; the wanted one is not among them."),
+            StateSearch.Outcome.NoneThatShort => TooShort(),
+            _ => null,
+        };
+    }
+
+    // Whether a path exists, by shapes and vertex group. The context is of the region of both states where a path is proven to exist.
+    private (string? Impossible, RegionContext? Context, string? Unsettled) Prove(State from, State to, CancellationToken cancellation)
+    {
+        _fromHome ??= ShapeGroupoid.Explore(Mechanism, new ExplorationOptions { MaxShapes = Options.MaxShapes }, null, cancellation);
+        var groupoid = _fromHome;
+        var start = groupoid.IndexOf(from.Shape!);
+        if (start < 0 || (groupoid.IsComplete && !InOneRegion(groupoid, start, groupoid.IndexOf(to.Shape!))))
+        {
+            groupoid = ShapeGroupoid.ExploreFrom(from.Shape!, new ExplorationOptions { MaxShapes = Options.MaxShapes }, null, cancellation);
+            start = 0;
+        }
+
+        if (!groupoid.IsComplete)
+        {
+            return (null, null, $"There are more than {Options.MaxShapes} shapes, too many to prove anything within the budget.");
+        }
+
+        var end = groupoid.IndexOf(to.Shape!);
+        if (end < 0)
+        {
+            return ($"The shapes differ for good: no turn path leads from the shape {from.Shape} to the shape {to.Shape}.", null, null);
+        }
+
+        var wanted = from.Labels.Inverse() * to.Labels;
+        if (InOneRegion(groupoid, start, end))
+        {
+            var context = Context(groupoid, start, cancellation);
+            var loop = LoopFor(context, wanted, start, end).Loop;
+            var evidence = context.Group.Group.Explain(loop);
+            return evidence.IsMember ? (null, context, null) : (Explain(evidence, context), null, null);
+        }
+
+        // Passages lie between. Whatever path there is, it makes with the tree a loop on the graph of all shapes, walked in either sense.
+        var tree = RegionTree.OfAll(groupoid);
+        var all = VertexGroupExtraction.Run(groupoid, tree, cancellation);
+        var across = all.Group.Explain(wanted * TurnPath.Follow(groupoid.ShapeAt(0), tree.PathTo(end)!.Value).Permutation.Inverse());
+        return across.IsMember
+            ? (null, null, "A passage that cannot be walked back lies between the two shapes, so membership in a vertex group does not settle it.")
+            : ("Even if every step could be taken back, no turn path would bring the labels there. " + Describe(across), null, null);
+    }
+
+    private static bool InOneRegion(ShapeGroupoid groupoid, int one, int other) => other >= 0 && groupoid.RegionOf(one) == groupoid.RegionOf(other);
+
+    private RegionContext Context(ShapeGroupoid groupoid, int shape, CancellationToken cancellation)
+    {
+        if (!ReferenceEquals(groupoid, _fromHome))
+        {
+            return new RegionContext(groupoid.VertexGroupAt(shape, cancellation), Options.Seed);
+        }
+
+        var region = groupoid.Regions[groupoid.RegionOf(shape)];
+        if (!_contexts.TryGetValue(region.Index, out var context))
+        {
+            context = new RegionContext(groupoid.VertexGroupAt(region.FirstShape, cancellation), Options.Seed);
+            _contexts.Add(region.Index, context);
+        }
+
+        return context;
+    }
+
+    // Splits the wanted permutation into a path to the base shape, a loop there, and a tree path to the end.
+    private static (TurnPath There, Permutation Loop, TurnPath Out) LoopFor(RegionContext context, Permutation wanted, int start, int end)
+    {
+        var there = context.Groupoid.FindPath(start, context.Group.BaseShape)!;
+        var outward = context.Group.TreePath(end);
+        return (there, there.Permutation.Inverse() * wanted * outward.Permutation.Inverse(), outward);
+    }
+
+    private SolveResult Long(State from, State to, RegionContext context, int lowerBound, CancellationToken cancellation)
+    {
+        var (there, loop, outward) = LoopFor(
+            context, from.Labels.Inverse() * to.Labels, context.Groupoid.IndexOf(from.Shape!), context.Groupoid.IndexOf(to.Shape!));
+        if (context.Undo(loop.Inverse(), cancellation) is not { } word)
+        {
+            return SolveResult.Unsettled("The vertex group proves that a path exists, but no word of reasonable length was found for it.", Options.MaxLength is null ? true : null);
+        }
+
+        var steps = PathShortening.Shorten([.. there.Steps, .. word, .. outward.Steps]);
+        return steps.Count > Options.MaxLength
+            ? SolveResult.Unsettled($"The budget of {Options.MaxStates} states ended the search; there is a path of {steps.Count} steps and none of fewer than {lowerBound}.")
+            : SolveResult.Found(
+                Replayed(from, steps, end => end == to),
+                $"Made from the shape tree and a stabilizer chain with words; a search proved that no path has fewer than {lowerBound} steps before its budget ended.");
+    }
+
+    private string Explain(MembershipEvidence evidence, RegionContext context)
+    {
+        var shape = context.Groupoid.ShapeAt(context.Group.BaseShape);
+        return $"The shape can be reached, but the vertex group at {(shape == Mechanism.Home ? "home" : $"the shape {shape}")} (order {context.Group.Order}) does not hold the permutation. " + Describe(evidence);
+    }
+
+    private string Describe(MembershipEvidence evidence)
+    {
+        string Name(int? site) => Mechanism.SiteNames[site!.Value];
+        return evidence.Kind switch
+        {
+            MembershipEvidenceKind.LeavesOrbit => $"The label on {Name(evidence.Point)} would have to go to {Name(evidence.Image)}, outside its orbit.",
+            MembershipEvidenceKind.LeavesLevel => $"At level {evidence.Level + 1} of its stabilizer chain the label on {Name(evidence.Point)} would have to go to {Name(evidence.Image)} with the base points before it in place, which no member does.",
+            _ => $"With all base points of its stabilizer chain in place, {Mechanism.Notation.Format(evidence.Residue)} is left over.",
+        };
+    }
+}
