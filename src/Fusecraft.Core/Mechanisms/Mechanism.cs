@@ -15,6 +15,7 @@ public sealed partial class Mechanism
     private readonly Lazy<ShapeBoard> _board;
     private readonly Lazy<PermutationGroup> _unguardedGroup;
     private readonly Lazy<StepNames> _stepNames;
+    private readonly Lazy<SiteMover> _siteMover;
 
     internal Mechanism(
         MechanismDefinition definition,
@@ -51,6 +52,7 @@ public sealed partial class Mechanism
         Turns = allTurns.DrainToImmutable();
         Steps = steps.DrainToImmutable();
         _board = new Lazy<ShapeBoard>(() => new ShapeBoard(this));
+        _siteMover = new Lazy<SiteMover>(() => SiteMover.Of(this));
         _stepNames = new Lazy<StepNames>(() => new StepNames(Steps));
         _unguardedGroup = new Lazy<PermutationGroup>(() => PermutationGroup.Generate(Turns.Select(turn => turn.Permutation), SiteCount));
     }
@@ -124,6 +126,8 @@ public sealed partial class Mechanism
     internal ShapeBoard Board => _board.Value;
 
     internal StepNames StepNames => _stepNames.Value;
+
+    internal SiteMover SiteMover => _siteMover.Value;
 
     /// <summary>Makes a mechanism from its definition.</summary>
     /// <exception cref="MechanismFormatException">The definition has mistakes; all of them are listed.</exception>

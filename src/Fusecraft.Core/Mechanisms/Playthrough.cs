@@ -1,4 +1,3 @@
-using System.Runtime.CompilerServices;
 using Fusecraft.Permutations;
 
 namespace Fusecraft.Mechanisms;
@@ -10,9 +9,12 @@ namespace Fusecraft.Mechanisms;
 public sealed class Playthrough
 {
     private readonly StepMoves[] _moves;
-    private readonly int[][] _cycles;
-    private readonly int[] _labels;
-    private ulong[] _key;
+    private readonly SiteMover _mover;
+    private readonly int _boardWords;
+    private readonly ulong[] _startLabels;
+
+    // The shape's key, then the label on each site.
+    private ulong[] _now;
     private ulong[] _next;
     private ushort[] _history;
 
@@ -39,11 +41,15 @@ public sealed class Playthrough
         Start = start;
         Mechanism = start.Mechanism;
         _moves = Mechanism.Board.Moves.ToArray();
-        _cycles = [.. Mechanism.Steps.Select(step => Flatten(step.Permutation))];
-        _labels = new int[Mechanism.SiteCount];
-        _key = new ulong[Mechanism.Board.Words];
-        _next = new ulong[_key.Length];
+        _mover = Mechanism.SiteMover;
+        _boardWords = Mechanism.Board.Words;
+        _now = new ulong[_boardWords + _mover.Words];
+        _next = new ulong[_now.Length];
         _history = new ushort[historyCapacity];
+        _startLabels = new ulong[_mover.Words];
+        var labels = new int[Mechanism.SiteCount];
+        start.Labels.Inverse().CopyImages(labels);
+        _mover.Load(labels, _startLabels);
         Reset();
     }
 
@@ -59,20 +65,25 @@ public sealed class Playthrough
     /// <summary>The number of steps that <see cref="Redo"/> can do again.</summary>
     public int RedoCount { get; private set; }
 
-    /// <summary>For each site, the label that is on it now; labels are named by their home sites. Changes with every step.</summary>
-    public ReadOnlySpan<int> Labels => _labels;
-
     /// <summary>The state now, as an immutable value. Allocates.</summary>
-    public State State => new(Mechanism, Permutation.FromSources(_labels), new Shape(Mechanism, _key));
+    public State State
+    {
+        get
+        {
+            var labels = new int[Mechanism.SiteCount];
+            CopyLabels(labels);
+            return new State(Mechanism, Permutation.FromSources(labels), Shape);
+        }
+    }
 
     /// <summary>True when every label is home.</summary>
     public bool IsHome
     {
         get
         {
-            for (var site = 0; site < _labels.Length; site++)
+            for (var site = 0; site < Mechanism.SiteCount; site++)
             {
-                if (_labels[site] != site)
+                if (_mover.NumberOn(site, Labels) != site)
                 {
                     return false;
                 }
@@ -82,22 +93,54 @@ public sealed class Playthrough
         }
     }
 
+    private ReadOnlySpan<ulong> Key => _now.AsSpan(0, _boardWords);
+
+    private ReadOnlySpan<ulong> Labels => _now.AsSpan(_boardWords);
+
+    private Shape Shape => new(Mechanism, Key);
+
+    /// <summary>The label that is on a site now, named by its home site.</summary>
+    /// <param name="site">The number of a site.</param>
+    /// <exception cref="ArgumentOutOfRangeException">There is no such site.</exception>
+    public int LabelOn(int site)
+    {
+        ArgumentOutOfRangeException.ThrowIfNegative(site);
+        ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(site, Mechanism.SiteCount);
+        return _mover.NumberOn(site, Labels);
+    }
+
+    /// <summary>Writes the label that is on each site now.</summary>
+    /// <param name="labels">Room for one label a site.</param>
+    /// <exception cref="ArgumentException">There is not enough room.</exception>
+    public void CopyLabels(Span<int> labels)
+    {
+        if (labels.Length < Mechanism.SiteCount)
+        {
+            throw new ArgumentException($"There is room for {labels.Length} labels; the mechanism has {Mechanism.SiteCount} sites.", nameof(labels));
+        }
+
+        for (var site = 0; site < Mechanism.SiteCount; site++)
+        {
+            labels[site] = _mover.NumberOn(site, Labels);
+        }
+    }
+
     /// <summary>True when the step is free now.</summary>
     /// <param name="step">The number of a step.</param>
     /// <exception cref="IndexOutOfRangeException">There is no such step.</exception>
-    public bool IsFree(int step) => _moves[step].IsFree(_key);
+    public bool IsFree(int step) => _moves[step].IsFree(Key);
 
     /// <summary>What bars the step now, or null when it is free. Allocates.</summary>
     /// <param name="step">The number of a step.</param>
-    public Barrier? WhyBarred(int step) => new Shape(Mechanism, _key).WhyBarred(Mechanism.Steps[step]);
+    public Barrier? WhyBarred(int step) => Shape.WhyBarred(Mechanism.Steps[step]);
 
-    /// <summary>Does a step if it is free; forgets the steps that could have been done again. Constant time in the number of sites moved.</summary>
+    /// <summary>Does a step if it is free; forgets the steps that could have been done again. Takes time in the number of sites.</summary>
     /// <param name="step">The number of a step.</param>
     /// <returns>False, and nothing changes, where the step is barred.</returns>
     /// <exception cref="IndexOutOfRangeException">There is no such step.</exception>
     public bool TryStep(int step)
     {
-        if (!_moves[step].IsFree(_key))
+        if (!_moves[step].IsFree(Key))
         {
             return false;
         }
@@ -132,7 +175,7 @@ public sealed class Playthrough
         var count = 0;
         for (var step = 0; step < _moves.Length; step++)
         {
-            if (_moves[step].IsFree(_key))
+            if (_moves[step].IsFree(Key))
             {
                 if (count == steps.Length)
                 {
@@ -177,8 +220,8 @@ public sealed class Playthrough
     /// <summary>Goes back to the start and forgets all steps.</summary>
     public void Reset()
     {
-        Start.Labels.Inverse().CopyImages(_labels);
-        Start.Shape!.Key.CopyTo(_key);
+        Start.Shape!.Key.CopyTo(_now);
+        _startLabels.CopyTo(_now.AsSpan(_boardWords));
         StepCount = 0;
         RedoCount = 0;
     }
@@ -211,52 +254,17 @@ public sealed class Playthrough
         return play;
     }
 
-    // Cycles one after the other, each preceded by its length.
-    private static int[] Flatten(Permutation permutation)
-    {
-        var flat = new List<int>();
-        foreach (var cycle in permutation.Cycles())
-        {
-            flat.Add(cycle.Length);
-            flat.AddRange(cycle);
-        }
-
-        return [.. flat];
-    }
-
     private void Do(int step)
     {
-        _moves[step].Move(_key, _next);
-        (_key, _next) = (_next, _key);
-        var cycles = _cycles[step];
-        for (var at = 0; at < cycles.Length; at += cycles[at] + 1)
-        {
-            var last = at + cycles[at];
-            var carried = _labels[cycles[last]];
-            for (var i = last; i > at + 1; i--)
-            {
-                _labels[cycles[i]] = _labels[cycles[i - 1]];
-            }
-
-            _labels[cycles[at + 1]] = carried;
-        }
+        _moves[step].Move(Key, _next);
+        _mover.Move(step, Labels, _next.AsSpan(_boardWords));
+        (_now, _next) = (_next, _now);
     }
 
     private void UndoStep(int step)
     {
-        _moves[step].MoveBack(_key, _next);
-        (_key, _next) = (_next, _key);
-        var cycles = _cycles[step];
-        for (var at = 0; at < cycles.Length; at += cycles[at] + 1)
-        {
-            var last = at + cycles[at];
-            var carried = _labels[cycles[at + 1]];
-            for (var i = at + 1; i < last; i++)
-            {
-                _labels[cycles[i]] = _labels[cycles[i + 1]];
-            }
-
-            _labels[cycles[last]] = carried;
-        }
+        _moves[step].MoveBack(Key, _next);
+        _mover.MoveBack(step, Labels, _next.AsSpan(_boardWords));
+        (_now, _next) = (_next, _now);
     }
 }

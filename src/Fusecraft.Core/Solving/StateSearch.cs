@@ -1,9 +1,6 @@
 using System.Collections.Immutable;
-using System.Numerics;
-using System.Runtime.InteropServices;
 using Fusecraft.Groupoids;
 using Fusecraft.Mechanisms;
-using Fusecraft.Permutations;
 
 namespace Fusecraft.Solving;
 
@@ -17,7 +14,7 @@ internal sealed class StateSearch
     private readonly CancellationToken _cancellation;
     private readonly int _boardWords;
     private readonly int _words;
-    private readonly ISiteMover _mover;
+    private readonly SiteMover _mover;
     private readonly Side _forward;
     private readonly Side _backward;
 
@@ -28,7 +25,7 @@ internal sealed class StateSearch
         _mechanism = mechanism;
         _cancellation = cancellation;
         _boardWords = mechanism.Board.Words;
-        _mover = mechanism.SiteCount <= 256 ? new SiteMover<byte>(mechanism) : new SiteMover<ushort>(mechanism);
+        _mover = mechanism.SiteMover;
         _words = _boardWords + _mover.Words;
         _forward = new Side(_words);
         _backward = new Side(_words);
@@ -221,55 +218,5 @@ internal sealed class StateSearch
         public int LevelSize => LevelEnd - Next;
 
         public bool IsExhausted => Next == Store.Count;
-    }
-
-    /// <summary>Moves colours from site to site; in two widths of lanes behind one interface.</summary>
-    private interface ISiteMover
-    {
-        int Words { get; }
-
-        void Load(ReadOnlySpan<int> colourOn, Span<ulong> packed);
-
-        void Move(int step, ReadOnlySpan<ulong> packed, Span<ulong> next);
-
-        void MoveBack(int step, ReadOnlySpan<ulong> packed, Span<ulong> previous);
-    }
-
-    private sealed class SiteMover<T> : ISiteMover
-        where T : unmanaged, IBinaryInteger<T>
-    {
-        private readonly PackedPermutations<T> _steps;
-        private readonly PackedPermutations<T> _inverses;
-
-        public SiteMover(Mechanism mechanism)
-        {
-            var stride = Lanes.PaddedLength(mechanism.SiteCount);
-            Words = stride * System.Runtime.CompilerServices.Unsafe.SizeOf<T>() / sizeof(ulong);
-            _steps = new PackedPermutations<T>(stride, Math.Max(1, mechanism.Steps.Length));
-            _inverses = new PackedPermutations<T>(stride, Math.Max(1, mechanism.Steps.Length));
-            foreach (var step in mechanism.Steps)
-            {
-                step.Permutation.CopyLanes(_steps.AddRow());
-                step.Permutation.Inverse().CopyLanes(_inverses.AddRow());
-            }
-        }
-
-        public int Words { get; }
-
-        public void Load(ReadOnlySpan<int> colourOn, Span<ulong> packed)
-        {
-            var lanes = MemoryMarshal.Cast<ulong, T>(packed);
-            for (var site = 0; site < colourOn.Length; site++)
-            {
-                lanes[site] = T.CreateTruncating(colourOn[site]);
-            }
-        }
-
-        // The label that comes to a site was where the inverse takes that site.
-        public void Move(int step, ReadOnlySpan<ulong> packed, Span<ulong> next) =>
-            Lanes.ComposePadded<T>(_inverses[step], MemoryMarshal.Cast<ulong, T>(packed), MemoryMarshal.Cast<ulong, T>(next));
-
-        public void MoveBack(int step, ReadOnlySpan<ulong> packed, Span<ulong> previous) =>
-            Lanes.ComposePadded<T>(_steps[step], MemoryMarshal.Cast<ulong, T>(packed), MemoryMarshal.Cast<ulong, T>(previous));
     }
 }
