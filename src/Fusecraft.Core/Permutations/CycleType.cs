@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using System.Globalization;
 using System.Numerics;
 
 namespace Fusecraft.Permutations;
@@ -15,7 +14,7 @@ public readonly struct CycleType : IEquatable<CycleType>
 
     private CycleType(ImmutableArray<(int Length, int Count)> parts) => _parts = parts;
 
-    /// <summary>The lengths from two up, longest first, with the number of cycles of each.</summary>
+    /// <summary>The lengths from two up, longest first, with the number of cycles of each, which is positive; empty for the identity.</summary>
     public ImmutableArray<(int Length, int Count)> Parts => _parts.IsDefault ? [] : _parts;
 
     /// <summary>The least common multiple of the lengths; 1 for the identity.</summary>
@@ -87,10 +86,23 @@ public readonly struct CycleType : IEquatable<CycleType>
         return hash.ToHashCode();
     }
 
-    /// <inheritdoc/>
-    public override string ToString() => Parts.IsEmpty ? "1" : string.Join(' ', Parts.Select(part =>
-        part.Count == 1 ? string.Create(CultureInfo.InvariantCulture, $"{part.Length}") : string.Create(CultureInfo.InvariantCulture, $"{part.Length}^{part.Count}")));
+    /// <summary>Lengths with exponents, longest first, such as <c>5^2 3 2</c>; <c>1</c> for the identity.</summary>
+    public override string ToString() => Parts.IsEmpty
+        ? "1"
+        : string.Join(' ', Parts.Select(part => part.Count == 1 ? $"{part.Length}" : $"{part.Length}^{part.Count}"));
 
-    internal static CycleType Of(ImmutableArray<ImmutableArray<int>> cycles) => new(
-        [.. cycles.GroupBy(cycle => cycle.Length).OrderByDescending(group => group.Key).Select(group => (group.Key, group.Count()))]);
+    /// <summary>Makes a cycle type from the number of cycles of each length: <c>counts[k]</c> of length <c>k</c>. Lengths 0 and 1 are passed over.</summary>
+    internal static CycleType FromCounts(ReadOnlySpan<int> counts)
+    {
+        var parts = ImmutableArray.CreateBuilder<(int Length, int Count)>();
+        for (var length = counts.Length - 1; length >= 2; length--)
+        {
+            if (counts[length] > 0)
+            {
+                parts.Add((length, counts[length]));
+            }
+        }
+
+        return new CycleType(parts.DrainToImmutable());
+    }
 }

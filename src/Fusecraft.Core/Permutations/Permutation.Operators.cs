@@ -31,7 +31,7 @@ public readonly partial struct Permutation : IMultiplyOperators<Permutation, Per
         }
 
         var degree = Math.Max(left.SupportEnd, right.SupportEnd);
-        return degree <= 256 ? Multiply<byte>(left, right, degree) : Multiply<ushort>(left, right, degree);
+        return degree <= NarrowDegree ? Multiply<byte>(left, right, degree) : Multiply<ushort>(left, right, degree);
     }
 
     /// <summary>This permutation followed by another: the same as <c>this * next</c>.</summary>
@@ -41,36 +41,31 @@ public readonly partial struct Permutation : IMultiplyOperators<Permutation, Per
     public Permutation Inverse() => SupportEnd switch
     {
         0 => default,
-        <= 256 and var degree => Invert<byte>(degree),
+        <= NarrowDegree and var degree => Invert<byte>(degree),
         var degree => Invert<ushort>(degree),
     };
 
-    /// <summary>This permutation done <paramref name="exponent"/> times; negative exponents undo it. Takes time in the degree only, whatever the exponent.</summary>
+    /// <summary>This permutation done <paramref name="exponent"/> times; negative exponents undo it, 0 gives the identity.</summary>
+    /// <remarks>Linear in <see cref="SupportEnd"/> whatever the exponent, apart from dividing it by cycle lengths.</remarks>
+    /// <param name="exponent">Any integer, of any size.</param>
     public Permutation Power(BigInteger exponent)
     {
-        var degree = SupportEnd;
-        var images = new int[degree];
-        var cycle = new int[degree];
-        var seen = new bool[degree];
-        for (var start = 0; start < degree; start++)
+        using var scratch = new Scratch<int>(SupportEnd);
+        var images = scratch.Span;
+        Lanes.Identity(images);
+        var (length, shift) = (1, 0);
+        foreach (var cycle in new CycleWalk(this))
         {
-            var length = 0;
-            for (var point = start; !seen[point]; point = Image(point))
+            if (cycle.Length != length)
             {
-                seen[point] = true;
-                cycle[length++] = point;
+                length = cycle.Length;
+                shift = (int)BigInteger.Remainder(exponent, length);
+                shift += shift < 0 ? length : 0;
             }
 
-            if (length == 0)
-            {
-                continue;
-            }
-
-            var shift = (int)BigInteger.Remainder(exponent, length);
-            shift = shift < 0 ? shift + length : shift;
             for (var i = 0; i < length; i++)
             {
-                images[cycle[i]] = cycle[(i + shift) % length];
+                images[cycle[i]] = cycle[i + shift < length ? i + shift : i + shift - length];
             }
         }
 
@@ -78,17 +73,11 @@ public readonly partial struct Permutation : IMultiplyOperators<Permutation, Per
     }
 
     /// <summary>The conjugate <c>by⁻¹ * this * by</c>: the same permutation with every point <c>i</c> renamed <c>by[i]</c>.</summary>
-    public Permutation ConjugateBy(Permutation by)
+    public Permutation ConjugateBy(Permutation by) => Math.Max(SupportEnd, by.SupportEnd) switch
     {
-        var degree = Math.Max(SupportEnd, by.SupportEnd);
-        var images = new int[degree];
-        for (var i = 0; i < degree; i++)
-        {
-            images[by.Image(i)] = by.Image(Image(i));
-        }
-
-        return FromTrustedImages<int>(images);
-    }
+        <= NarrowDegree and var degree => Conjugate<byte>(by, degree),
+        var degree => Conjugate<ushort>(by, degree),
+    };
 
     /// <summary>The commutator <c>first * second * first⁻¹ * second⁻¹</c>, in the order in which turn words are read; the identity exactly when the two commute.</summary>
     public static Permutation Commutator(Permutation first, Permutation second) => first * second * (second * first).Inverse();
@@ -109,11 +98,24 @@ public readonly partial struct Permutation : IMultiplyOperators<Permutation, Per
     private Permutation Invert<T>(int degree)
         where T : unmanaged, IBinaryInteger<T>
     {
-        using var scratch = new Scratch<T>(2 * degree);
-        var p = scratch.Span[..degree];
-        var r = scratch.Span[degree..];
-        CopyLanes(p);
-        Lanes.Invert<T>(p, r);
-        return FromTrustedImages<T>(r);
+        var images = new T[degree];
+        Lanes.Invert(LanesFor<T>(degree, default), images.AsSpan());
+        return FromOwnedImages(images);
+    }
+
+    private Permutation Conjugate<T>(Permutation by, int degree)
+        where T : unmanaged, IBinaryInteger<T>
+    {
+        // One buffer is enough: of the two the longer one has as many lanes as the result already.
+        using var buffer = new Scratch<T>(SupportEnd == by.SupportEnd ? 0 : degree);
+        var images = new T[degree];
+        var p = LanesFor(degree, buffer.Span);
+        var q = by.LanesFor(degree, buffer.Span);
+        for (var i = 0; i < degree; i++)
+        {
+            images[int.CreateTruncating(q[i])] = q[int.CreateTruncating(p[i])];
+        }
+
+        return FromOwnedImages(images);
     }
 }

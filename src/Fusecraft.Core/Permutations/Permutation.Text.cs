@@ -39,21 +39,23 @@ public readonly partial struct Permutation : ISpanParsable<Permutation>, ISpanFo
         return ToString();
     }
 
-    /// <inheritdoc/>
+    /// <summary>Writes disjoint cycles of 1-based numbers into a span; false, with nothing counted as written, where they do not fit.</summary>
+    /// <param name="destination">Where to write.</param>
+    /// <param name="charsWritten">How many characters were written.</param>
+    /// <param name="format">Empty or <c>G</c>.</param>
+    /// <param name="provider">Not used: the notation does not depend on a culture.</param>
+    /// <exception cref="FormatException">Another format was asked for.</exception>
     public bool TryFormat(Span<char> destination, out int charsWritten, ReadOnlySpan<char> format, IFormatProvider? provider)
     {
         RequireGeneralFormat(format);
-        var text = ToString();
-        var fits = text.TryCopyTo(destination);
-        charsWritten = fits ? text.Length : 0;
-        return fits;
+        return CycleNotation.Numbers.TryFormat(this, destination, out charsWritten);
     }
 
     private static void RequireGeneralFormat(ReadOnlySpan<char> format)
     {
         if (format is not ("" or "G"))
         {
-            throw new FormatException($"Format \"{format}\" is unknown; permutations know \"G\", disjoint cycles.");
+            throw new FormatException($"Format \"{format}\" is unknown; the only one is \"G\", disjoint cycles.");
         }
     }
 }

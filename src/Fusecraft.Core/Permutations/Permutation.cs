@@ -19,7 +19,10 @@ public readonly partial struct Permutation : IEquatable<Permutation>
     /// <summary>Points must be smaller than this: 65,536.</summary>
     public const int MaxDegree = 65_536;
 
-    // Null (identity), byte[] (support end up to 256) or ushort[]; trimmed, so equal permutations have equal lanes.
+    /// <summary>Up to this support end lanes are bytes, above it they are 16 bits wide.</summary>
+    internal const int NarrowDegree = 256;
+
+    // Null (identity), byte[] (support end up to NarrowDegree) or ushort[]; trimmed, so equal permutations have equal lanes.
     private readonly Array? _lanes;
 
     private Permutation(Array? lanes) => _lanes = lanes;
@@ -61,13 +64,13 @@ public readonly partial struct Permutation : IEquatable<Permutation>
     public static Permutation FromSources(params ReadOnlySpan<int> sources)
     {
         RequirePermutation(sources, nameof(sources));
-        var images = new int[sources.Length];
-        Lanes.Invert(sources, images);
-        return FromTrustedImages(images);
+        using var images = new Scratch<int>(sources.Length);
+        Lanes.Invert(sources, images.Span);
+        return FromTrustedImages<int>(images.Span);
     }
 
     /// <summary>Makes one cycle: each point goes to the next one, the last to the first.</summary>
-    /// <param name="points">Distinct points, 0-based; none or one gives the identity.</param>
+    /// <param name="points">Distinct points below <see cref="MaxDegree"/>, 0-based; none or one gives the identity.</param>
     /// <exception cref="ArgumentException">A point is negative, too large, or repeated.</exception>
     public static Permutation FromCycle(params ReadOnlySpan<int> points)
     {
@@ -82,20 +85,23 @@ public readonly partial struct Permutation : IEquatable<Permutation>
             degree = Math.Max(degree, point + 1);
         }
 
-        var images = new int[degree];
-        Lanes.Identity<int>(images);
+        using var scratch = new Scratch<int>(degree);
+        using var met = new Scratch<bool>(degree);
+        var images = scratch.Span;
+        Lanes.Identity(images);
+        met.Span.Clear();
         for (var i = 0; i < points.Length; i++)
         {
-            if (images[points[i]] != points[i])
+            if (met.Span[points[i]])
             {
-                throw new ArgumentException($"Point {points[i]} stands twice in the cycle.", nameof(points));
+                throw new ArgumentException($"Point {points[i]} stands twice in the cycle; its points must be distinct.", nameof(points));
             }
 
-            images[points[i]] = points[(i + 1) % points.Length];
+            met.Span[points[i]] = true;
+            images[points[i]] = i + 1 < points.Length ? points[i + 1] : points[0];
         }
 
-        RequirePermutation(images, nameof(points));
-        return FromTrustedImages(images);
+        return FromTrustedImages<int>(images);
     }
 
     /// <summary>Copies the images of the points 0 … <c>images.Length - 1</c>.</summary>
@@ -138,12 +144,26 @@ public readonly partial struct Permutation : IEquatable<Permutation>
         where T : unmanaged, IBinaryInteger<T>
     {
         var end = Lanes.SupportEnd(images);
+        AssertPermutation(images[..end]);
         return end switch
         {
             0 => default,
-            <= 256 => new Permutation(Convert<T, byte>(images[..end])),
+            <= NarrowDegree => new Permutation(Convert<T, byte>(images[..end])),
             _ => new Permutation(Convert<T, ushort>(images[..end])),
         };
+    }
+
+    /// <summary>As <see cref="FromTrustedImages{T}(ReadOnlySpan{T})"/>, but keeps the array itself where it needs no trimming; nobody else may write to it any more.</summary>
+    private static Permutation FromOwnedImages<T>(T[] images)
+        where T : unmanaged, IBinaryInteger<T>
+    {
+        if (Lanes.SupportEnd<T>(images) != images.Length || images.Length == 0 || typeof(T) != (images.Length <= NarrowDegree ? typeof(byte) : typeof(ushort)))
+        {
+            return FromTrustedImages<T>(images);
+        }
+
+        AssertPermutation<T>(images);
+        return new Permutation(images);
     }
 
     /// <summary>Writes the images of the points 0 … n-1 as lanes, extended by fixed points. The permutation moves nothing beyond n-1.</summary>
@@ -163,12 +183,30 @@ public readonly partial struct Permutation : IEquatable<Permutation>
         }
     }
 
-    private int Image(int point) => _lanes switch
+    /// <summary>The lanes for a degree: the permutation's own where they are that many, else a copy in the buffer, extended by fixed points.</summary>
+    private ReadOnlySpan<T> LanesFor<T>(int degree, Span<T> buffer)
+        where T : unmanaged, IBinaryInteger<T>
     {
-        byte[] narrow when (uint)point < (uint)narrow.Length => narrow[point],
-        ushort[] wide when (uint)point < (uint)wide.Length => wide[point],
-        _ => point,
-    };
+        if (SupportEnd == degree && _lanes is T[] own)
+        {
+            return own;
+        }
+
+        CopyLanes(buffer[..degree]);
+        return buffer[..degree];
+    }
+
+    // The length alone decides the width, which spares a failing (slow) type test.
+    private int Image(int point)
+    {
+        var end = SupportEnd;
+        if ((uint)point >= (uint)end)
+        {
+            return point;
+        }
+
+        return end <= NarrowDegree ? ((byte[])_lanes!)[point] : ((ushort[])_lanes!)[point];
+    }
 
     private static TTo[] Convert<TFrom, TTo>(ReadOnlySpan<TFrom> from)
         where TFrom : unmanaged, IBinaryInteger<TFrom>
@@ -202,7 +240,9 @@ public readonly partial struct Permutation : IEquatable<Permutation>
             throw new ArgumentException($"{images.Length} points were given; at most {MaxDegree} are supported.", parameter);
         }
 
-        var seen = new bool[images.Length];
+        using var scratch = new Scratch<bool>(images.Length);
+        var met = scratch.Span;
+        met.Clear();
         for (var i = 0; i < images.Length; i++)
         {
             var image = images[i];
@@ -211,12 +251,28 @@ public readonly partial struct Permutation : IEquatable<Permutation>
                 throw new ArgumentException($"Entry {i} is {image}; every entry must be in 0 … {images.Length - 1}.", parameter);
             }
 
-            if (seen[image])
+            if (met[image])
             {
                 throw new ArgumentException($"Entry {i} is {image}, which stands in the list already; every point must occur once.", parameter);
             }
 
-            seen[image] = true;
+            met[image] = true;
+        }
+    }
+
+    [Conditional("DEBUG")]
+    private static void AssertPermutation<T>(ReadOnlySpan<T> images)
+        where T : unmanaged, IBinaryInteger<T>
+    {
+        Debug.Assert(images.Length <= MaxDegree, "Too many points.");
+        using var scratch = new Scratch<bool>(images.Length);
+        var met = scratch.Span;
+        met.Clear();
+        foreach (var lane in images)
+        {
+            var image = int.CreateTruncating(lane);
+            Debug.Assert((uint)image < (uint)met.Length && !met[image], "The images are no permutation.");
+            met[image] = true;
         }
     }
 }

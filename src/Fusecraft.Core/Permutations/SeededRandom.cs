@@ -18,6 +18,7 @@ public sealed class SeededRandom
     private ulong _s3;
 
     /// <summary>Starts the sequence that belongs to a seed.</summary>
+    /// <param name="seed">Any number; neighbouring seeds give unrelated sequences.</param>
     public SeededRandom(ulong seed)
     {
         Seed = seed;
