@@ -33,6 +33,17 @@ public class ArchitectureTests
         Assert.Empty(offences);
     }
 
+    [Theory]
+    [InlineData("Groups", "Permutations", true)]
+    [InlineData("Groups", "Groups", true)]
+    [InlineData("Permutations", "Groups", false)]
+    [InlineData("Geometry", "Mechanisms", true)]
+    [InlineData("Geometry", "Groups", false)]
+    [InlineData("Groupoids", "Geometry", false)]
+    [InlineData("Solving", "Reporting", false)]
+    [InlineData("Reporting", "Geometry", true)]
+    public void A_layer_may_use_those_above_it_except_the_barred(string user, string used, bool may) => Assert.Equal(may, MayUse(user, used));
+
     [Fact]
     public void References_inside_code_are_found()
     {

@@ -13,20 +13,36 @@ public partial class ConventionTests
     private static readonly Type[] _public = typeof(Permutation).Assembly.GetExportedTypes();
 
     [Fact]
-    public void Public_structs_are_readonly_values_with_equality() => Assert.Empty(_public
-        .Where(type => type.IsValueType && !type.IsEnum && !type.IsByRefLike)
-        .Where(type => !type.IsDefined(typeof(IsReadOnlyAttribute), false)
-            || !type.GetInterfaces().Contains(typeof(IEquatable<>).MakeGenericType(type))
-            || type.GetMethod("op_Equality", [type, type]) is null
-            || type.GetMethod("op_Inequality", [type, type]) is null));
+    public void Public_structs_are_readonly_values_with_equality()
+    {
+        var offences =
+            from type in _public
+            where type.IsValueType && !type.IsEnum && !type.IsByRefLike
+            where !type.IsDefined(typeof(IsReadOnlyAttribute), false)
+                || !type.GetInterfaces().Contains(typeof(IEquatable<>).MakeGenericType(type))
+                || type.GetMethod("op_Equality", [type, type]) is null
+                || type.GetMethod("op_Inequality", [type, type]) is null
+            select type;
+        Assert.Empty(offences);
+    }
 
     [Fact]
-    public void Public_classes_are_sealed_static_or_abstract() => Assert.Empty(_public.Where(type => type.IsClass && !type.IsSealed && !type.IsAbstract));
+    public void Public_classes_are_sealed_static_or_abstract()
+    {
+        var offences = from type in _public where type.IsClass && !type.IsSealed && !type.IsAbstract select type;
+        Assert.Empty(offences);
+    }
 
     [Fact]
-    public void No_public_field_is_an_array() => Assert.Empty(_public
-        .SelectMany(type => type.GetFields(BindingFlags.Public | BindingFlags.Instance | BindingFlags.Static))
-        .Where(field => field.FieldType.IsArray));
+    public void No_public_field_is_an_array()
+    {
+        var offences =
+            from type in _public
+            from field in type.GetFields(BindingFlags.Public | BindingFlags.Instance | BindingFlags.Static)
+            where field.FieldType.IsArray
+            select $"{type}.{field.Name}";
+        Assert.Empty(offences);
+    }
 
     [Fact]
     public void A_file_holds_at_most_one_public_type_and_is_named_after_it()

@@ -27,7 +27,7 @@ public class CycleTypeTests
 
     [Fact]
     public void Parts_go_from_the_longest_to_the_shortest() =>
-        Assert.Equal([(5, 1), (3, 1), (2, 2)], Permutation.Parse("(1 2)(3 4)(5 6 7)(8 9 10 11 12)").CycleType.Parts);
+        Assert.Equal<(int Length, int Count)>([(5, 1), (3, 1), (2, 2)], Permutation.Parse("(1 2)(3 4)(5 6 7)(8 9 10 11 12)").CycleType.Parts);
 
     [Property]
     public bool The_order_is_the_least_positive_power_that_is_the_identity(Permutation p)
