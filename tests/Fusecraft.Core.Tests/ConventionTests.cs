@@ -63,7 +63,7 @@ public partial class ConventionTests
         where lines > LongestFile
         select $"{file} has {lines} lines");
 
-    [GeneratedRegex(@"^public\s[^(=;{]*?\b(class|struct|interface|enum|record|record struct|delegate\s+\S+)\s+(?<name>\w+)", RegexOptions.Multiline)]
+    [GeneratedRegex(@"^public\s[^(=;{]*?\b(record\s+struct|record\s+class|record|class|struct|interface|enum|delegate\s+\S+)\s+(?<name>\w+)", RegexOptions.Multiline)]
     private static partial Regex PublicType();
 
     private static IEnumerable<string> SourceFiles(string folder) => Directory.EnumerateFiles(Path.Combine(Root(), folder), "*.cs", SearchOption.AllDirectories)
