@@ -21,6 +21,10 @@ internal sealed class ProblemList
         }
     }
 
+    /// <summary>Adds a problem whose place is known better than by its path, such as that of a member's name.</summary>
+    public void AddAt(TextPosition place, string path, string found, string expected) =>
+        _problems.Add(new MechanismProblem(path, place.Line, place.Column, found, expected));
+
     /// <summary>True when the member, or one inside it, has a problem.</summary>
     public bool Concerns(string path) =>
         _paths.Contains(path) || _paths.Any(other => other.StartsWith(path, StringComparison.Ordinal) && other[path.Length] is '.' or '[');
