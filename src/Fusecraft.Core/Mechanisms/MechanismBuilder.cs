@@ -36,7 +36,7 @@ public sealed class MechanismBuilder
     {
         ArgumentOutOfRangeException.ThrowIfLessThan(siteCount, 1);
         ArgumentOutOfRangeException.ThrowIfGreaterThan(siteCount, Permutations.Permutation.MaxDegree);
-        return new MechanismBuilder(name, null, NumberedNames.Of(siteCount));
+        return new MechanismBuilder(name, null, Blueprint.NumberedNames(siteCount));
     }
 
     /// <summary>Begins a mechanism of its own.</summary>

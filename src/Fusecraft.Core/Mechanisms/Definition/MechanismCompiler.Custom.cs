@@ -8,12 +8,11 @@ internal sealed partial class MechanismCompiler
 {
     private Blueprint? ReadCustom()
     {
-        if (!NameRules.RequireSites(_definition.Sites, "$.sites", _problems))
+        if (NameRules.CheckSites(_definition.Sites, "$.sites", _problems) is not { } sites)
         {
             return null;
         }
 
-        var sites = _definition.Sites;
         var siteOf = Enumerable.Range(0, sites.Length).ToDictionary(i => sites[i]);
         var (pieceOfSite, sitesOfPiece) = ReadPieces(siteOf);
         var blueprint = new Blueprint
@@ -29,7 +28,7 @@ internal sealed partial class MechanismCompiler
         var marks = _definition.Marks.Select(mark => mark.Name).ToHashSet();
         foreach (var turn in _definition.Turns)
         {
-            var path = $"$.turns.{turn.Name}";
+            var path = JsonPath.Member("$.turns", turn.Name);
             if (!NameRules.IsTurnName(turn.Name))
             {
                 _problems.Add(path, $"turn name \"{turn.Name}\"", $"a turn's name starts with a letter or a digit and is made of {NameRules.Characters}");
@@ -64,7 +63,7 @@ internal sealed partial class MechanismCompiler
                 var path = $"$.pieces[{i}][{k}]";
                 if (!siteOf.TryGetValue(list[k], out var site))
                 {
-                    _problems.Add(path, $"\"{list[k]}\"", $"the name of a site: {Listing(_definition.Sites)}");
+                    _problems.Add(path, $"\"{list[k]}\"", $"should be the name of a site: {Listing(_definition.Sites)}");
                 }
                 else if (group[site] >= 0)
                 {
@@ -136,7 +135,7 @@ internal sealed partial class MechanismCompiler
 
         if (!notation.TryParse(turn.Moves, out var moves, out var problem))
         {
-            _problems.Add($"{path}.moves", $"\"{turn.Moves}\"", $"disjoint cycles of sites ({problem})");
+            _problems.Add($"{path}.moves", $"\"{turn.Moves}\"", $"should be disjoint cycles of sites ({problem})");
             return null;
         }
 

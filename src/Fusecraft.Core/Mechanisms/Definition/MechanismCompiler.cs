@@ -76,7 +76,7 @@ internal sealed partial class MechanismCompiler
             var whole = turn ?? (name.EndsWith('2') ? all.Find(candidate => candidate.Name == name[..^1]) : null);
             if (whole is null)
             {
-                _problems.Add(path, $"\"{name}\"", $"a turn of this family, or its half turn with 2 behind it: {Listing(all.Select(candidate => candidate.Name))}");
+                _problems.Add(path, $"\"{name}\"", $"should be a turn of this family, or its half turn with 2 behind it: {Listing(all.Select(candidate => candidate.Name))}");
             }
             else if (!taken.Add(whole.Name))
             {
@@ -102,7 +102,7 @@ internal sealed partial class MechanismCompiler
         var seen = new HashSet<string>();
         foreach (var mark in _definition.Marks)
         {
-            var path = $"$.marks.{mark.Name}";
+            var path = JsonPath.Member("$.marks", mark.Name);
             if (!NameRules.IsName(mark.Name))
             {
                 _problems.Add(path, $"\"{mark.Name}\"", $"a mark's name is made of {NameRules.Characters}");
@@ -258,7 +258,7 @@ internal sealed partial class MechanismCompiler
             return site;
         }
 
-        _problems.Add(path, $"\"{name}\"", $"the name of a site: {Listing(names.SiteNames)}");
+        _problems.Add(path, $"\"{name}\"", $"should be the name of a site: {Listing(names.SiteNames)}");
         return null;
     }
 
@@ -273,7 +273,12 @@ internal sealed partial class MechanismCompiler
 
         if (!marks.Contains(text[..at]))
         {
-            _problems.Add(path, $"mark \"{text[..at]}\"", marks.Count == 0 ? "no mark is declared; add it to \"marks\"" : $"a declared mark: {Listing(marks)}");
+            // Where "marks" could not be read, nothing is known about the marks it was to declare.
+            if (marks.Count > 0 || !_problems.Concerns("$.marks"))
+            {
+                _problems.Add(path, $"mark \"{text[..at]}\"", marks.Count == 0 ? "no mark is declared; add it to \"marks\"" : $"should be a declared mark: {Listing(marks)}");
+            }
+
             return null;
         }
 

@@ -17,28 +17,37 @@ internal static class NameRules
 
     public static bool IsTurnName(ReadOnlySpan<char> name) => IsName(name) && char.IsAsciiLetterOrDigit(name[0]);
 
-    /// <summary>Complains about site names that are missing, too many, malformed or repeated.</summary>
-    public static bool RequireSites(ImmutableArray<string> names, string path, ProblemList problems)
+    /// <summary>
+    /// Complains about site names that are missing, too many, malformed or repeated. Names that cannot serve are replaced, so that the others keep their numbers and what is said about them
+    /// can be checked; null where there is nothing to check against.
+    /// </summary>
+    public static ImmutableArray<string>? CheckSites(ImmutableArray<string> names, string path, ProblemList problems)
     {
         if (names.IsEmpty || names.Length > Permutation.MaxDegree)
         {
             problems.Add(path, names.IsEmpty ? "no sites" : $"{names.Length} sites", $"there are 1 to {Permutation.MaxDegree} sites");
-            return false;
+            return null;
         }
 
         var seen = new HashSet<string>();
+        var checkedNames = ImmutableArray.CreateBuilder<string>(names.Length);
         for (var i = 0; i < names.Length; i++)
         {
-            if (!IsName(names[i]))
+            var serves = IsName(names[i]);
+            if (!serves)
             {
                 problems.Add($"{path}[{i}]", $"\"{names[i]}\"", $"a name is made of {Characters}");
             }
             else if (!seen.Add(names[i]))
             {
+                serves = false;
                 problems.Add($"{path}[{i}]", $"\"{names[i]}\" a second time", "names are distinct");
             }
+
+            // A number sign cannot stand in a name, so this one is nobody else's.
+            checkedNames.Add(serves ? names[i] : $"#{i + 1}");
         }
 
-        return seen.Count == names.Length;
+        return checkedNames.DrainToImmutable();
     }
 }

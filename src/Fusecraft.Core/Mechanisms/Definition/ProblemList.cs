@@ -21,6 +21,9 @@ internal sealed class ProblemList
         }
     }
 
+    /// <summary>Accepts no complaint about a member any more, for one that is inside a member which could not be read.</summary>
+    public void Silence(string path) => _paths.Add(path);
+
     /// <summary>Adds a problem whose place is known better than by its path, such as that of a member's name.</summary>
     public void AddAt(TextPosition place, string path, string found, string expected) =>
         _problems.Add(new MechanismProblem(path, place.Line, place.Column, found, expected));

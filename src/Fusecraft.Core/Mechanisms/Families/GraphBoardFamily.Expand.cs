@@ -7,12 +7,12 @@ public sealed partial class GraphBoardFamily
     /// <inheritdoc/>
     internal override Blueprint? Expand(ProblemList problems)
     {
-        if (!NameRules.RequireSites(Vertices, "$.family.vertices", problems))
+        if (NameRules.CheckSites(Vertices, "$.family.vertices", problems) is not { } vertices)
         {
             return null;
         }
 
-        var numberOf = Enumerable.Range(0, Vertices.Length).ToDictionary(i => Vertices[i]);
+        var numberOf = Enumerable.Range(0, vertices.Length).ToDictionary(i => vertices[i]);
         var edges = new List<SlidingEdge>();
         var seen = new HashSet<(int, int)>();
         for (var i = 0; i < Edges.Length; i++)
@@ -49,6 +49,6 @@ public sealed partial class GraphBoardFamily
             }
         }
 
-        return SlidingEdge.ToBlueprint(Vertices, edges, Gaps, problems);
+        return SlidingEdge.ToBlueprint(vertices, edges, Gaps, problems);
     }
 }

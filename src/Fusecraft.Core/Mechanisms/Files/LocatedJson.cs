@@ -59,7 +59,7 @@ internal sealed class LocatedJson
     /// </summary>
     public (int Line, int Column)? Locate(string path)
     {
-        _byPath ??= All().Except(Repeated).DistinctBy(json => json.Path).ToDictionary(json => json.Path);
+        _byPath ??= All().DistinctBy(json => json.Path).ToDictionary(json => json.Path);
         LocatedJson? json;
         while (!_byPath.TryGetValue(path, out json))
         {

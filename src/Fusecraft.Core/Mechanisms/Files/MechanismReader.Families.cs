@@ -62,6 +62,8 @@ internal sealed partial class MechanismReader
             if (edge is not { IsList: true, Children: [var from, var to] })
             {
                 _problems.Add(edge.Path, edge.IsList ? $"a list of {edge.Children.Count}" : edge.Found, pair);
+                _problems.Silence(JsonPath.Index(edge.Path, 0));
+                _problems.Silence(JsonPath.Index(edge.Path, 1));
                 return ("", "");
             }
 

@@ -65,7 +65,7 @@ internal sealed partial class MechanismReader
 
     private ImmutableArray<string> Strings(LocatedJson? json, string what)
     {
-        if (!IsListOrAbsent(json, $"should be a list; each item {what}"))
+        if (!IsListOrAbsent(json, $"should be a list, each item {what}"))
         {
             return [];
         }
@@ -75,7 +75,7 @@ internal sealed partial class MechanismReader
 
     private ImmutableArray<string> Names(LocatedJson? json, string what)
     {
-        if (!IsListOrAbsent(json, $"should be a list; each item the name of a {what}"))
+        if (!IsListOrAbsent(json, $"should be a list, each item the name of a {what}"))
         {
             return [];
         }
@@ -85,7 +85,7 @@ internal sealed partial class MechanismReader
 
     private ImmutableArray<ImmutableArray<string>> ListsOfNames(LocatedJson? json, string what)
     {
-        if (!IsListOrAbsent(json, $"should be a list of lists; each item of those the name of a {what}"))
+        if (!IsListOrAbsent(json, $"should be a list of lists, each item of those the name of a {what}"))
         {
             return [];
         }

@@ -143,6 +143,9 @@ internal sealed partial class MechanismReader
             case { IsObject: true, Children: [{ Name: "sites" } sites] }:
                 RequireItems(sites, "should name at least one site");
                 return Goal.SitesHome(Names(sites, "site"));
+            case { IsObject: true, Children: [_] }:
+                RequireKnown(json, "marks", "sites");
+                return Goal.Home;
             default:
                 _problems.Add(json.Path, json.Found, expected);
                 return Goal.Home;
@@ -188,6 +191,6 @@ internal sealed partial class MechanismReader
             return [];
         }
 
-        return NumberedNames.Of(count);
+        return Blueprint.NumberedNames(count);
     }
 }

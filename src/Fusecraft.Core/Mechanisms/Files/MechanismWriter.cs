@@ -140,7 +140,7 @@ internal static class MechanismWriter
     }
 
     private static JsonLayout CountOrNames(ImmutableArray<string> names) =>
-        names.Length > 0 && NumberedNames.Are(names) ? JsonLayout.Number(names.Length) : JsonLayout.Strings(names);
+        names.Length > 0 && names.SequenceEqual(Blueprint.NumberedNames(names.Length)) ? JsonLayout.Number(names.Length) : JsonLayout.Strings(names);
 
     private static void Text(JsonLayout json, string name, string? text)
     {
