@@ -16,6 +16,7 @@ public sealed class MechanismBuilder
     private readonly List<TurnDefinition> _turns = [];
     private readonly List<ImmutableArray<string>> _blocks = [];
     private readonly List<MarkDefinition> _marks = [];
+    private string? _schema;
     private string? _about;
     private Goal _goal = Fusecraft.Mechanisms.Goal.Home;
     private ColourScheme _colours = ColourScheme.Distinct;
@@ -65,6 +66,14 @@ public sealed class MechanismBuilder
     /// <param name="gaps">The vertices that are gaps at home; none given: the last vertex.</param>
     public static MechanismBuilder GraphBoard(string name, IEnumerable<string> vertices, IEnumerable<(string From, string To)> edges, params IEnumerable<string> gaps) =>
         new(name, new GraphBoardFamily([.. vertices], [.. edges], [.. gaps]), []);
+
+    /// <summary>Names the JSON Schema that editors check the written file with.</summary>
+    /// <param name="address">Kept, not read.</param>
+    public MechanismBuilder Schema(string address)
+    {
+        _schema = address;
+        return this;
+    }
 
     /// <summary>Tells something about the mechanism.</summary>
     public MechanismBuilder About(string about)
@@ -140,6 +149,7 @@ public sealed class MechanismBuilder
     /// <summary>What has been written down so far, not checked.</summary>
     public MechanismDefinition ToDefinition() => new()
     {
+        Schema = _schema,
         Name = _name,
         About = _about,
         Family = _family,

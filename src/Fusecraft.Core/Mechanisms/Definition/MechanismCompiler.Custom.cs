@@ -63,7 +63,7 @@ internal sealed partial class MechanismCompiler
                 var path = $"$.pieces[{i}][{k}]";
                 if (!siteOf.TryGetValue(list[k], out var site))
                 {
-                    _problems.Add(path, $"\"{list[k]}\"", $"should be the name of a site: {Listing(_definition.Sites)}");
+                    _problems.Add(path, $"\"{list[k]}\"", $"should be the name of a site: {Listing(siteOf.Keys)}");
                 }
                 else if (group[site] >= 0)
                 {

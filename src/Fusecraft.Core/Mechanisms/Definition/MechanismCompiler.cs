@@ -287,7 +287,8 @@ internal sealed partial class MechanismCompiler
 
     private static string Listing(IEnumerable<string> names)
     {
-        var list = names.Take(13).ToList();
+        // Names that stand in for bad ones are nobody's business.
+        var list = names.Where(static name => NameRules.IsName(name)).Take(13).ToList();
         return list.Count <= 12 ? string.Join(", ", list) : string.Join(", ", list.Take(10)) + ", …";
     }
 }

@@ -7,7 +7,8 @@ internal static class AtomicFile
     internal static void Write(string path, Action<Stream> write)
     {
         // A link stays a link; what it points to is replaced.
-        var target = File.ResolveLinkTarget(path, returnFinalTarget: true)?.FullName ?? Path.GetFullPath(path);
+        var file = new FileInfo(path);
+        var target = file.LinkTarget is null ? file.FullName : file.ResolveLinkTarget(returnFinalTarget: true)!.FullName;
         var temporary = $"{target}.{Path.GetRandomFileName()}";
         try
         {
