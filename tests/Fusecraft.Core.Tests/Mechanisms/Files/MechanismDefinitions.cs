@@ -74,7 +74,7 @@ public static class MechanismDefinitions
         from size in Gen.Choose(2, 4)
         from twist in Gen.Elements(true, false)
         from use in Gen.Elements<string[]>([], ["U"], ["U", "R2", "F"])
-        from blocks in Gen.Elements<string[][]>([], [["1,1,1", "1,1,2"]], [["1,1,1", "1,2,1"], ["2,2,2", "2,1,2"]])
+        from blocks in Gen.Elements<string[][]>([], [["1,1,1", "1,1,2"]], [["1,1,1", "1,2,1"], ["2,1,1", "2,1,2"]])
         from goal in Gen.Elements(Goal.Home, Goal.Shape, Goal.Colours)
         from colours in Gen.Elements(ColourScheme.Distinct, ColourScheme.Faces)
         from name in Texts
