@@ -1,5 +1,6 @@
 using System.Diagnostics;
 using System.Numerics;
+using System.Runtime.CompilerServices;
 using Fusecraft.Permutations;
 
 namespace Fusecraft.Groups;
@@ -66,6 +67,7 @@ internal sealed class ChainLevel<T>
     public bool IsTreeEdge(int from, int generator, int to) => _edges[to] == (from, generator);
 
     /// <summary>Adds a generator that fixes all earlier base points and extends the orbit.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public void AddGenerator(ReadOnlySpan<T> generator)
     {
         Generators.Add(generator);
@@ -87,6 +89,7 @@ internal sealed class ChainLevel<T>
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Step(int from, int generator)
     {
         var image = int.CreateTruncating(Generators[generator][_orbit[from]]);

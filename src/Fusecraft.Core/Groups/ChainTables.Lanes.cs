@@ -1,5 +1,6 @@
 using System.Diagnostics;
 using System.Numerics;
+using System.Runtime.CompilerServices;
 using Fusecraft.Permutations;
 
 namespace Fusecraft.Groups;
@@ -48,6 +49,7 @@ internal sealed class ChainTables<T> : ChainTables
     /// Strips representatives off in place, from a level on: afterwards the permutation is what was given times an element of that level's group.
     /// Gives the level whose orbit the image of the base point is not in, or the number of levels.
     /// </summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public int Sift(Span<T> permutation, int from = 0)
     {
         Debug.Assert(permutation.Length == Stride, "Padded lanes are needed.");

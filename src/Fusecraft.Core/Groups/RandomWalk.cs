@@ -1,4 +1,5 @@
 using System.Numerics;
+using System.Runtime.CompilerServices;
 using Fusecraft.Permutations;
 
 namespace Fusecraft.Groups;
@@ -14,7 +15,7 @@ internal sealed class RandomWalk<T>(int stride)
     where T : unmanaged, IBinaryInteger<T>
 {
     private const int FewestSlots = 6;
-    private const int WarmUp = 12;
+    private const int WarmUp = 40;
 
     private readonly PackedPermutations<T> _slots = new(stride, FewestSlots + 1);
     private readonly T[] _accumulator = new T[stride];
@@ -53,6 +54,7 @@ internal sealed class RandomWalk<T>(int stride)
         return _accumulator;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Step(SeededRandom random)
     {
         var count = _slots.Count;

@@ -48,6 +48,7 @@ internal static partial class Lanes
     }
 
     /// <summary><c>result[p[i]] = i</c> for padded lists. The result may not overlap <paramref name="p"/>.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static void InvertPadded<T>(ReadOnlySpan<T> p, Span<T> result)
         where T : unmanaged, IBinaryInteger<T>
     {
@@ -81,6 +82,7 @@ internal static partial class Lanes
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void ComposeUnchecked<T>(ref T p, ref T q, ref T result, int length)
         where T : unmanaged, IBinaryInteger<T>
     {

@@ -86,6 +86,7 @@ internal static partial class Lanes
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void ComposeAvx2Long(ref byte p, ref byte q, ref byte result, int length)
     {
         for (var i = 0; i < length; i += 32)
