@@ -1,0 +1,75 @@
+using System.Collections.Immutable;
+using Fusecraft.Groupoids;
+using Fusecraft.Groups;
+using Fusecraft.Mechanisms;
+using Fusecraft.Tests.Support;
+
+namespace Fusecraft.Tests.Published;
+
+/// <summary>
+/// The game on the projective plane of order 3: points 0 … 12, lines {i, i+1, i+3, i+9} mod 13. With the gap at p, the counter of q goes to p and the counters on the other two points of the
+/// line pq change places. Sources: J. H. Conway, M13, in <em>Surveys in Combinatorics</em> 1997, 1-11; J. H. Conway, N. D. Elkies, J. L. Martin, The Mathieu group M12 and its pseudogroup
+/// extension M13, Experiment. Math. 15 (2006) 223-236 (abstract opened).
+/// </summary>
+public class ThirteenPointGameTests
+{
+    [Fact]
+    public void Closed_sequences_make_the_Mathieu_group_M12_wherever_the_gap_is()
+    {
+        var groupoid = ShapeGroupoid.Explore(Game(Line));
+        Assert.Equal(13, groupoid.ShapeCount);
+        var home = groupoid.VertexGroupAt(0);
+        for (var shape = 0; shape < 13; shape++)
+        {
+            var group = groupoid.VertexGroupAt(shape);
+            Assert.Equal(95040, group.Order);
+            Assert.Equal(ChainProof.Proven, group.Group.Chain.Proof);
+
+            // Sharply 5-transitive on the twelve counters.
+            Assert.Equal([12, 11, 10, 9, 8], group.Group.Chain.OrbitLengths.ToArray());
+            Assert.Equal(12, Assert.Single(group.Group.MovedOrbits).Length);
+            Conjugacy.Holds(home, group);
+        }
+    }
+
+    // The same 2006 paper: M13 has 13 x 95040 elements.
+    [Fact]
+    public void There_are_13_times_as_many_positions() => Assert.Equal(1235520, ShapeGroupoid.Explore(Game(Line)).VertexGroupAt(0).StateCount);
+
+    // Own figure: without the gap's rule the moves, each a product of two transpositions, generate the alternating group.
+    [Fact]
+    public void Without_the_gap_the_moves_make_the_alternating_group() => Assert.Equal(3113510400, Game(Line).UnguardedGroup.Order);
+
+    private static int[] Line(int i) => [i, (i + 1) % 13, (i + 3) % 13, (i + 9) % 13];
+
+    private static Mechanism Game(Func<int, int[]> line)
+    {
+        var turns = ImmutableArray.CreateBuilder<TurnDefinition>();
+        for (var i = 0; i < 13; i++)
+        {
+            var points = line(i);
+            for (var a = 0; a < 4; a++)
+            {
+                for (var b = a + 1; b < 4; b++)
+                {
+                    int[] others = [.. points.Where((_, k) => k != a && k != b)];
+                    turns.Add(new TurnDefinition
+                    {
+                        Name = $"{points[a]}:{points[b]}",
+                        Moves = $"({points[a]} {points[b]})({others[0]} {others[1]})",
+                        Guard = Make.Needs($"gap@{points[a]}"),
+                    });
+                }
+            }
+        }
+
+        Assert.Equal(78, turns.Count);
+        return Mechanism.Create(new MechanismDefinition
+        {
+            Name = "thirteen points",
+            Sites = [.. Enumerable.Range(0, 13).Select(i => $"{i}")],
+            Turns = turns.ToImmutable(),
+            Marks = [Make.Mark("gap", "0")],
+        });
+    }
+}
