@@ -1,6 +1,7 @@
 using System.Numerics;
 using Fusecraft.Groups;
 using Fusecraft.Permutations;
+using Fusecraft.Tests.Support;
 
 namespace Fusecraft.Tests.Published;
 
@@ -234,7 +235,7 @@ public class GroupOrderTests
     [Fact]
     public void The_3x3x3_turns_make_a_group_of_the_published_order()
     {
-        var group = PermutationGroup.Generate(CubeFacelets.LayerTurns(3, 0));
+        var group = PermutationGroup.Generate(CubeFacelets.LayerTurns(3, 1));
 
         Assert.Equal(48, group.Degree);
         Assert.Equal(FactoredInteger.Parse("2^27·3^14·5^3·7^2·11"), group.FactoredOrder);
@@ -246,7 +247,7 @@ public class GroupOrderTests
     [Fact]
     public void The_2x2x2_with_six_layers_has_the_published_order()
     {
-        var group = PermutationGroup.Generate(CubeFacelets.LayerTurns(2, 0));
+        var group = PermutationGroup.Generate(CubeFacelets.LayerTurns(2, 1));
 
         Assert.Equal(24, group.Degree);
         Assert.Equal(88179840, group.Order);
@@ -256,7 +257,7 @@ public class GroupOrderTests
     [Fact]
     public void The_5x5x5_turns_make_a_group_of_the_published_order()
     {
-        var group = PermutationGroup.Generate(CubeFacelets.LayerTurns(5, 0, 1));
+        var group = PermutationGroup.Generate(CubeFacelets.LayerTurns(5, 1, 2));
 
         Assert.Equal(144, group.Degree);
         Assert.Equal(12, group.Generators.Length);

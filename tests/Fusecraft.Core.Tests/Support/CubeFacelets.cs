@@ -70,6 +70,15 @@ public sealed class CubeFacelets
         return Permutation.FromImages(images);
     }
 
+    /// <summary>Quarter turns of single layers on each of the six sides, at the given depths (1 = outer); stickers that none of them moves are left out.</summary>
+    public static Permutation[] LayerTurns(int size, params int[] depths)
+    {
+        var cube = new CubeFacelets(size);
+        var turns = depths.SelectMany(depth => _faces.Select(face => cube.Turn(face.Face, depth, depth))).ToList();
+        int[] moved = [.. Enumerable.Range(0, cube.Stickers.Count).Where(point => turns.Exists(turn => turn[point] != point))];
+        return [.. turns.Select(turn => Permutation.FromImages([.. moved.Select(point => Array.IndexOf(moved, turn[point]))]))];
+    }
+
     /// <summary>A word of quarter turns of outer layers, read from left to right, such as <c>R U2 D' B D'</c>.</summary>
     public Permutation Word(string word)
     {

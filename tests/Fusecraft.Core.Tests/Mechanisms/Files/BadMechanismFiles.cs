@@ -187,7 +187,7 @@ public static class BadMechanismFiles
         { "moves of an unknown site", Members("""{ "sites": 3, "turns": { "A": { "moves": "(1 2 4)" } } }"""),
           """line 2, column 42, $.turns.A.moves: found "(1 2 4)"; should be disjoint cycles of sites (character 6: found "4", which is not the name of a point)""" },
         { "moves that are not disjoint", Members("""{ "sites": 3, "turns": { "A": { "moves": "(1 2)(2 3)" } } }"""),
-          """line 2, column 42, $.turns.A.moves: found "(1 2)(2 3)"; should be disjoint cycles of sites (character 7: found "2" a second time; cycles must be disjoint)""" },
+          """line 2, column 42, $.turns.A.moves: found "(1 2)(2 3)"; should be disjoint cycles of sites (character 7: found "2" a second time; every point may stand once only)""" },
         { "moves that are not closed", Members("""{ "sites": 3, "turns": { "A": { "moves": "(1 2 3" } } }"""),
           """line 2, column 42, $.turns.A.moves: found "(1 2 3"; should be disjoint cycles of sites (character 7: the text ends inside a cycle; ')' is missing)""" },
         { "a turn that moves nothing", Members("""{ "sites": 3, "turns": { "A": { "moves": "()" } } }"""),
