@@ -57,6 +57,9 @@ internal static class Cli
         root.Add(SchemaCommand.Create(terminal));
         root.Add(CheckCommand.Create(terminal));
         root.Add(ExamineCommand.Create(terminal));
+        root.Add(RouteCommand.Create(terminal));
+        root.Add(SolveCommand.Create(terminal));
+        root.Add(TraceCommand.Create(terminal));
         Help.Install(root);
         var version = root.Options.OfType<VersionOption>().Single();
         version.Description = "Shows the version.";
