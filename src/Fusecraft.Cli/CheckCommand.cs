@@ -25,7 +25,7 @@ internal static class CheckCommand
             }
             catch (InputException exception)
             {
-                terminal.Error.WriteLine(exception.Message);
+                terminal.Complain(exception);
                 code = ExitCodes.BadInput;
             }
         }

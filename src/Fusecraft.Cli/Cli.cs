@@ -15,9 +15,10 @@ internal static class Cli
     /// <returns>One of <see cref="ExitCodes"/>.</returns>
     public static async Task<int> RunAsync(string[] args, TextWriter output, TextWriter error, CancellationToken cancellationToken = default)
     {
+        var terminal = new Terminal(output, error);
         try
         {
-            var root = Root(new Terminal(output, error));
+            var root = Root(terminal);
             var parsed = root.Parse(args, new ParserConfiguration { ResponseFileTokenReplacer = null });
             return parsed.Errors.Count > 0 && parsed.Action is not (Help or VersionAction)
                 ? WrongUsage(root, parsed, error)
@@ -25,7 +26,7 @@ internal static class Cli
         }
         catch (InputException exception)
         {
-            await error.WriteLineAsync(exception.Message);
+            terminal.Complain(exception);
             return ExitCodes.BadInput;
         }
         catch (OperationCanceledException)

@@ -8,7 +8,7 @@ internal static class ExaminationText
 {
     private const int MostOrbits = 12;
     private const int MostSites = 10;
-    private const int LabelWidth = 26;
+    private const int LabelWidth = 28;
     private const int ValueWidth = 8;
 
     public static string Size(Mechanism mechanism) =>
@@ -23,18 +23,18 @@ internal static class ExaminationText
         if (examination.HomeRegion is not { } home)
         {
             Row(output, "shapes found so far", Wording.Number(examination.ShapeCount), "there are more");
-            Row(output, "free turns found so far", Wording.Number(examination.FreeTurnCount), "a shape and a turn that can be made there");
+            Row(output, "free turns found so far", Wording.Number(examination.FreeTurnCount), "pairs of a shape and a turn whose forward step is free");
             return;
         }
 
         Row(output, "shapes", Wording.Number(examination.ShapeCount), "reachable from home");
-        Row(output, "free turns", Wording.Number(examination.FreeTurnCount), "a shape and a turn that can be made there");
-        Row(output, "dead ends", Wording.Number(examination.DeadEndCount!.Value), "shapes where only one turn can be made, one way or the other");
-        Row(output, "stuck shapes", Wording.Number(examination.StuckShapeCount!.Value), "shapes where no turn can be made");
+        Row(output, "free turns", Wording.Number(examination.FreeTurnCount), "pairs of a shape and a turn whose forward step is free");
+        Row(output, "dead ends", Wording.Number(examination.DeadEndCount!.Value), "shapes where exactly one turn has a free step, in either sense");
+        Row(output, "stuck shapes", Wording.Number(examination.StuckShapeCount!.Value), "shapes where no step is free");
 
         Section(output, "A region is made of shapes that can all reach each other.");
         Row(output, "regions", Wording.Number(examination.RegionCount!.Value), examination.RegionCount == 1 ? "every shape leads back home" : "");
-        Row(output, "passages", Wording.Number(examination.PassageCount!.Value), "free steps out of a region, with no way back");
+        Row(output, "passages", Wording.Number(examination.PassageCount!.Value), "free steps that leave their region: no way back");
         Row(output, "traps", Wording.Number(examination.TrapCount!.Value), "regions without passages, other than the home region");
 
         Section(output, "The home region holds the home shape.");

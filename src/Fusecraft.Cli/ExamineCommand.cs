@@ -65,7 +65,7 @@ internal static class ExamineCommand
             }
             catch (InputException exception)
             {
-                terminal.Error.WriteLine(exception.Message);
+                terminal.Complain(exception);
                 code = ExitCodes.MoreSerious(code, ExitCodes.BadInput);
             }
         }

@@ -72,5 +72,5 @@ internal static class MechanismInput
         mechanism.TryParseWord(text, out var word, out var problem) ? word : throw new InputException($"{option}: \"{text}\" is no word of {mechanism.Name}: {problem}");
 
     private static string Problems(string path, MechanismFormatException exception) =>
-        string.Join(Environment.NewLine, exception.Problems.Select(problem => $"{path}: {problem}"));
+        string.Join('\n', exception.Problems.Select(problem => $"{path}: {problem}"));
 }

@@ -21,6 +21,9 @@ internal sealed class Terminal
     /// <summary>True when <see cref="Error"/> is a terminal that somebody may be watching.</summary>
     public bool ShowsProgress { get; }
 
+    /// <summary>Tells the user what is wrong with what they gave.</summary>
+    public void Complain(InputException exception) => Error.WriteLine(exception.Message.ReplaceLineEndings(Error.NewLine));
+
     private static int? WindowWidth()
     {
         try
