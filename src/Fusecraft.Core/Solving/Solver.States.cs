@@ -53,7 +53,8 @@ public sealed partial class Solver
         SolveResult? Search(int maxStates) => search.Run(maxStates, Options.MaxLength) switch
         {
             StateSearch.Outcome.Found => SolveResult.Shortest(Replayed(from, search.Path, end => end == to)),
-            StateSearch.Outcome.NoPath => SolveResult.Impossible("A search has seen every state that can be reached; the wanted one is not among them."),
+            StateSearch.Outcome.NoPath => SolveResult.Impossible(
+                Prove(from, to, cancellation).Impossible ?? "A search has seen every state that can be reached; the wanted one is not among them."),
             StateSearch.Outcome.NoneThatShort => TooShort(),
             _ => null,
         };
