@@ -86,47 +86,48 @@ internal static partial class Lanes
         }
     }
 
+    // Only a pointer lets the table come by broadcasting loads; inserting the upper half takes as long as the shuffle itself.
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    private static void ComposeAvx2Long(ref byte p, ref byte q, ref byte result, int length)
+    private static unsafe void ComposeAvx2Long(ref byte p, ref byte q, ref byte result, int length)
     {
-        for (var i = 0; i < length; i += 32)
+        fixed (byte* table = &q)
         {
-            var index = Vector256.LoadUnsafe(ref p, (nuint)i);
-            Vector256<byte> image;
-            if (length <= 128)
+            for (nuint i = 0; i < (nuint)length; i += 32)
             {
-                image = Half(ref q, 0, length, index);
-            }
-            else
-            {
-                // A shuffle gives zero where bit 7 of its index is set; the blend by that bit never picks those.
-                image = Avx2.BlendVariable(Half(ref q, 0, 128, index), Half(ref q, 8, length - 128, index ^ Vector256.Create((byte)0x80)), index);
-            }
+                var index = Vector256.LoadUnsafe(ref p, i);
 
-            image.StoreUnsafe(ref result, (nuint)i);
+                // A shuffle gives zero where bit 7 of its index is set; the blend by that bit never picks those.
+                var image = length <= 128
+                    ? Half(table, length, index)
+                    : Avx2.BlendVariable(Half(table, 128, index), Half(table + 128, length - 128, index ^ Vector256.Create((byte)0x80)), index);
+                image.StoreUnsafe(ref result, i);
+            }
         }
     }
 
-    // Looks up indices below 128 in the table that starts at 16-byte unit `unit` and has `length` bytes, a multiple of 32 up to 128.
+    // Looks up indices below 128 in a table of `length` bytes, a multiple of 32 up to 128.
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static Vector256<byte> Half(ref byte q, int unit, int length, Vector256<byte> index)
+    private static unsafe Vector256<byte> Half(byte* table, int length, Vector256<byte> index)
     {
         if (length == 32)
         {
-            return Pair(Table(ref q, unit), Table(ref q, unit + 1), index);
+            return Pair(Table(table, 0), Table(table, 1), index);
         }
 
-        var low = Quad(Table(ref q, unit), Table(ref q, unit + 1), Table(ref q, unit + 2), Table(ref q, unit + 3), index);
+        var low = Quad(Table(table, 0), Table(table, 1), Table(table, 2), Table(table, 3), index);
         if (length == 64)
         {
             return low;
         }
 
         var high = length == 96
-            ? Pair(Table(ref q, unit + 4), Table(ref q, unit + 5), index)
-            : Quad(Table(ref q, unit + 4), Table(ref q, unit + 5), Table(ref q, unit + 6), Table(ref q, unit + 7), index);
+            ? Pair(Table(table, 4), Table(table, 5), index)
+            : Quad(Table(table, 4), Table(table, 5), Table(table, 6), Table(table, 7), index);
         return Avx2.BlendVariable(low, high, Avx2.ShiftLeftLogical(index.AsUInt16(), 1).AsByte());
     }
+
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static unsafe Vector256<byte> Table(byte* table, int unit) => Avx2.BroadcastVector128ToVector256(table + (16 * unit));
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static Vector256<byte> Quad(Vector256<byte> t0, Vector256<byte> t1, Vector256<byte> t2, Vector256<byte> t3, Vector256<byte> index) =>
@@ -141,7 +142,7 @@ internal static partial class Lanes
     private static Vector256<byte> Table(ref byte q, int unit)
     {
         var table = Vector128.LoadUnsafe(ref q, (nuint)unit * 16);
-        return Vector256.Create(table, table);
+        return Vector256.Create(table);
     }
 
     // Sixty-four lanes from an offset; zero beyond the end, which is a multiple of 32.
