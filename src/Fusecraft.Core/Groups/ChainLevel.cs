@@ -89,6 +89,7 @@ internal sealed class ChainLevel<T>
         }
     }
 
+    // Optimised from the first call, like sifting.
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Step(int from, int generator)
     {

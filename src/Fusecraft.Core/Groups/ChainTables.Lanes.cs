@@ -6,7 +6,10 @@ using Fusecraft.Permutations;
 namespace Fusecraft.Groups;
 
 /// <summary>The levels of a stabilizer chain with lanes of one width, and the sifting through them.</summary>
-/// <remarks>Reading is safe from several threads as long as no builder adds levels.</remarks>
+/// <remarks>
+/// Reading is safe from several threads as long as no builder adds levels. Sifting and its kernels are optimised from the first call: one chain is work enough
+/// to be slow in unoptimised code, and often the only one of a run.
+/// </remarks>
 internal sealed class ChainTables<T> : ChainTables
     where T : unmanaged, IBinaryInteger<T>
 {

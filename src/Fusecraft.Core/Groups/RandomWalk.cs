@@ -54,6 +54,7 @@ internal sealed class RandomWalk<T>(int stride)
         return _accumulator;
     }
 
+    // Optimised from the first call, like sifting.
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Step(SeededRandom random)
     {
