@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using Fusecraft.Mechanisms;
 using Fusecraft.Permutations;
 
@@ -11,13 +12,13 @@ internal static class PieceAction
         Permutation.FromImages([.. pieces.Select(piece => IndexOf(pieces, ImageOf(mechanism, sites, piece)))]);
 
     /// <summary>The permutation of the given sets of pieces, which must be carried to each other.</summary>
-    public static Permutation OfBlocks(Mechanism mechanism, Permutation sites, IReadOnlyList<IReadOnlyList<int>> blocks)
+    public static Permutation OfBlocks(Mechanism mechanism, Permutation sites, ImmutableArray<ImmutableArray<int>> blocks)
     {
-        var images = new int[blocks.Count];
+        var images = new int[blocks.Length];
         for (var i = 0; i < images.Length; i++)
         {
             var image = blocks[i].Select(piece => ImageOf(mechanism, sites, piece)).ToHashSet();
-            images[i] = Enumerable.Range(0, blocks.Count).Single(k => image.SetEquals(blocks[k]));
+            images[i] = Enumerable.Range(0, blocks.Length).Single(k => image.SetEquals(blocks[k]));
         }
 
         return Permutation.FromImages(images);
