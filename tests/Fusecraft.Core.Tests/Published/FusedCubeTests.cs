@@ -32,17 +32,17 @@ public class FusedCubeTests
 
     [Fact]
     public void A_2x2x2_with_six_layers_has_24_times_the_positions_of_one_that_is_held() =>
-        Assert.Equal(24 * 3674160, Has(Mechanism.Create(SixLayerCube.Definition()), 1, 12, 88179840).StateCount);
+        Assert.Equal(24 * 3674160, Has(MechanismFile.Parse(SixLayerCube.File()), 1, 12, 88179840).StateCount);
 
     [Fact]
     public void A_domino_of_a_2x2x2_gives_these_figures() =>
-        Assert.Equal(699840, Has(Mechanism.Create(SixLayerCube.Definition("UFR UBR")), 12, 96, 58320).StateCount);
+        Assert.Equal(699840, Has(MechanismFile.Parse(SixLayerCube.File("UFR UBR")), 12, 96, 58320).StateCount);
 
     [Theory]
     [InlineData("UFR UBR DFR DBR", 1, 4, 16, 16)]
     [InlineData("UFR UBR UFL", 4, 16, 4, 16)]
     public void A_slab_and_an_L_of_a_2x2x2_give_these_figures(string block, int shapes, int arrows, int order, int positions) =>
-        Assert.Equal(positions, Has(Mechanism.Create(SixLayerCube.Definition(block)), shapes, arrows, order).StateCount);
+        Assert.Equal(positions, Has(MechanismFile.Parse(SixLayerCube.File(block)), shapes, arrows, order).StateCount);
 
     // A plain search over positions with no group in it: a position says on which facelet the first facelet of each cell is.
     [Fact]

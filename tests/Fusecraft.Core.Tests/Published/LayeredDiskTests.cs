@@ -13,11 +13,23 @@ namespace Fusecraft.Tests.Published;
 /// </summary>
 public class LayeredDiskTests
 {
+    private const string Disk = """
+        { "format": "fusecraft/mechanism/1", "name": "Layered disk",
+          "sites": ["t1", "t2", "t3", "t4", "t5", "t6", "t7", "t8", "t9", "t10", "t11", "t12",
+                    "b1", "b2", "b3", "b4", "b5", "b6", "b7", "b8", "b9", "b10", "b11", "b12", "m1", "m2"],
+          "turns": {
+            "T": { "moves": "(t1 t2 t3 t4 t5 t6 t7 t8 t9 t10 t11 t12)" },
+            "B": { "moves": "(b1 b2 b3 b4 b5 b6 b7 b8 b9 b10 b11 b12)" },
+            "S": { "moves": "(t1 b6)(t2 b5)(t3 b4)(t4 b3)(t5 b2)(t6 b1)(m1 m2)" } },
+          "blocks": [["t1", "t2"], ["t4", "t5"], ["t7", "t8"], ["t10", "t11"],
+                     ["b1", "b2"], ["b4", "b5"], ["b7", "b8"], ["b10", "b11"]] }
+        """;
+
     // 19305: own figure; of these 3678 admit the slice turn: widely printed, value from memory, no source opened.
     [Fact]
     public void There_are_19305_shapes_of_which_3678_let_the_slice_turn()
     {
-        var groupoid = ShapeGroupoid.Explore(Disk());
+        var groupoid = ShapeGroupoid.Explore(MechanismFile.Parse(Disk));
         Assert.Equal(19305, groupoid.ShapeCount);
         Assert.Equal((2 * 19305) + 3678, groupoid.FreeTurnCount);
         Assert.Equal(0, groupoid.PassageCount);
@@ -27,7 +39,7 @@ public class LayeredDiskTests
     [Fact]
     public void All_wedges_of_a_kind_and_the_middle_can_be_exchanged_at_any_shape()
     {
-        var groupoid = ShapeGroupoid.Explore(Disk());
+        var groupoid = ShapeGroupoid.Explore(MechanismFile.Parse(Disk));
         foreach (var shape in (int[])[0, 1, 9652, 19304])
         {
             var group = groupoid.VertexGroupAt(shape);
@@ -39,19 +51,4 @@ public class LayeredDiskTests
             Assert.Equal(ChainProof.Proven, group.Group.Chain.Proof);
         }
     }
-
-    private static Mechanism Disk() => Mechanism.Create(new MechanismDefinition
-    {
-        Name = "layered disk",
-        Sites = [.. Places('t'), .. Places('b'), "m1", "m2"],
-        Turns =
-        [
-            Make.Turn("T", $"({string.Join(' ', Places('t'))})"),
-            Make.Turn("B", $"({string.Join(' ', Places('b'))})"),
-            Make.Turn("S", string.Concat(Enumerable.Range(1, 6).Select(i => $"(t{i} b{7 - i})")) + "(m1 m2)"),
-        ],
-        Blocks = [.. from layer in "tb" from place in (int[])[1, 4, 7, 10] select Make.Split($"{layer}{place} {layer}{place + 1}")],
-    });
-
-    private static IEnumerable<string> Places(char layer) => Enumerable.Range(1, 12).Select(i => $"{layer}{i}");
 }

@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using Fusecraft.Mechanisms;
 
 namespace Fusecraft.Tests.Support;
 
@@ -19,26 +18,20 @@ internal static class SixLayerCube
     /// <summary>Where each facelet goes in a clockwise quarter turn of each of the six layers.</summary>
     public static ImmutableArray<(string Name, ImmutableArray<int> Images)> Turns { get; } = [.. Layers.Select(layer => (layer.Name, Images(layer.Axis, layer.Side)))];
 
-    public static MechanismDefinition Definition(params ReadOnlySpan<string> blocks)
-    {
-        var lists = ImmutableArray.CreateBuilder<ImmutableArray<string>>();
-        foreach (var block in blocks)
-        {
-            lists.Add(Make.Split(block));
-        }
-
-        return new MechanismDefinition
-        {
-            Name = "2x2x2 with six layers",
-            Sites = [.. Facelets.Select(SiteName)],
-            Pieces = [.. Facelets.Select(SiteName).Chunk(3).Select(sites => sites.ToImmutableArray())],
-            Turns = [.. Turns.Select(turn => Make.Turn(turn.Name, Cycles(turn.Images)))],
-            Blocks = [.. lists.Select(cells => cells.Select(cell => cell + ".0").ToImmutableArray())],
-        };
-    }
+    /// <summary>The mechanism file, with blocks given as cells separated by spaces.</summary>
+    public static string File(params IEnumerable<string> blocks) => $$"""
+        { "format": "fusecraft/mechanism/1", "name": "2x2x2 with six layers",
+          "sites": {{List(Facelets.Select(SiteName))}},
+          "pieces": [{{string.Join(", ", Facelets.Select(SiteName).Chunk(3).Select(List))}}],
+          "turns": {
+            {{string.Join(",\n    ", Turns.Select(turn => $$"""
+            "{{turn.Name}}": { "moves": "{{Cycles(turn.Images)}}" }
+            """))}} },
+          "blocks": [{{string.Join(", ", blocks.Select(block => List(Make.Split(block).Select(cell => cell + ".0"))))}}] }
+        """;
 
     /// <summary>Disjoint cycles of site names.</summary>
-    public static string Cycles(ImmutableArray<int> images)
+    private static string Cycles(ImmutableArray<int> images)
     {
         var text = "";
         var seen = new HashSet<int>();
@@ -61,6 +54,8 @@ internal static class SixLayerCube
 
         return text;
     }
+
+    private static string List(IEnumerable<string> names) => $"[\"{string.Join("\", \"", names)}\"]";
 
     private static string SiteName((int X, int Y, int Z, int Axis) facelet) => $"{CellName(facelet.X, facelet.Y, facelet.Z)}.{facelet.Axis}";
 
