@@ -78,14 +78,17 @@ internal static class Cli
 
     private static int WrongUsage(RootCommand root, ParseResult parsed, TextWriter error)
     {
-        foreach (var message in parsed.Errors.Select(problem => problem.Message).Distinct())
+        var command = parsed.CommandResult.Command;
+        string[] messages = command is RootCommand && parsed.UnmatchedTokens is [var unknown, ..]
+            ? [$"There is no command '{unknown}'."]
+            : [.. parsed.Errors.Select(problem => problem.Message).Distinct()];
+        foreach (var message in messages)
         {
             error.WriteLine(message);
         }
 
         error.WriteLine();
-        string[] help = parsed.CommandResult.Command is RootCommand ? ["--help"] : [parsed.CommandResult.Command.Name, "--help"];
-        root.Parse(help).Invoke(Configuration(error, error));
+        root.Parse(command is RootCommand ? ["--help"] : [command.Name, "--help"]).Invoke(Configuration(error, error));
         return ExitCodes.Usage;
     }
 
