@@ -30,7 +30,7 @@ internal static class StarterMechanisms
     {
         Name = "My sliding board",
         About = "Tiles on a board slide into the gap. Change \"columns\" and \"rows\"; cells are numbered row by row from the top left. \"gaps\" lists the empty cells; without it the last cell is empty. "
-            + "Fuse tiles into longer ones with \"blocks\": [[\"1\", \"2\"]].",
+            + "Add \"blocks\": [[\"1\", \"2\"]] to fuse tiles: a slide carries one tile, so a block is an island that never moves.",
         Family = new BoardFamily(3, 2, "6"),
     };
 
