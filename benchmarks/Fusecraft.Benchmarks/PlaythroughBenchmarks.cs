@@ -24,7 +24,7 @@ public class PlaythroughBenchmarks
             state = state.TryStep(_mechanism.Steps[_steps[i]], out var next) ? next : state;
         }
 
-        _play = new Playthrough(_mechanism, Count);
+        _play = new Playthrough(_mechanism.HomeState, Count);
         if (TrySteps() == 0 || _play.State != state)
         {
             throw new InvalidOperationException("The playthrough is wrong.");
