@@ -12,13 +12,13 @@ public sealed class GuardDefinition
     public static GuardDefinition Always { get; } = new();
 
     /// <summary>Marks that must be there, as <c>mark@site</c>.</summary>
-    public ImmutableArray<string> Needs { get; init; } = [];
+    public ImmutableArray<string> Needs { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>Marks that must not be there, as <c>mark@site</c>.</summary>
-    public ImmutableArray<string> BarredBy { get; init; } = [];
+    public ImmutableArray<string> BarredBy { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>Guards of which at least one must hold; empty for no such condition.</summary>
-    public ImmutableArray<GuardDefinition> AnyOf { get; init; } = [];
+    public ImmutableArray<GuardDefinition> AnyOf { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>True when the guard has no condition at all.</summary>
     public bool IsAlways => Needs.IsEmpty && BarredBy.IsEmpty && AnyOf.IsEmpty;

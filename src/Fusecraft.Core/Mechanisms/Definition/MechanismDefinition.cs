@@ -22,22 +22,22 @@ public sealed class MechanismDefinition
     public MechanismFamily? Family { get; init; }
 
     /// <summary>The turns of the family that are kept, such as <c>U</c> or, for the half turn alone, <c>F2</c>; empty for all.</summary>
-    public ImmutableArray<string> Use { get; init; } = [];
+    public ImmutableArray<string> Use { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>The names of the sites of a custom mechanism, in the order of their numbers.</summary>
-    public ImmutableArray<string> Sites { get; init; } = [];
+    public ImmutableArray<string> Sites { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>The pieces of a custom mechanism that have several sites, as lists of site names; other sites are pieces of their own.</summary>
-    public ImmutableArray<ImmutableArray<string>> Pieces { get; init; } = [];
+    public ImmutableArray<ImmutableArray<string>> Pieces { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>The turns of a custom mechanism, in the order of their numbers.</summary>
-    public ImmutableArray<TurnDefinition> Turns { get; init; } = [];
+    public ImmutableArray<TurnDefinition> Turns { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>The blocks at home: each two or more pieces, named by any of their sites or by a name of their own.</summary>
-    public ImmutableArray<ImmutableArray<string>> Blocks { get; init; } = [];
+    public ImmutableArray<ImmutableArray<string>> Blocks { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>The marks at home.</summary>
-    public ImmutableArray<MarkDefinition> Marks { get; init; } = [];
+    public ImmutableArray<MarkDefinition> Marks { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>Where a solver wants to get.</summary>
     public Goal Goal { get; init; } = Goal.Home;

@@ -12,7 +12,7 @@ public sealed class TurnDefinition
     public required string Moves { get; init; }
 
     /// <summary>Pieces carried although none of their sites is in <see cref="Moves"/>.</summary>
-    public ImmutableArray<string> Carries { get; init; } = [];
+    public ImmutableArray<string> Carries { get; init => field = value.IsDefault ? [] : value; } = [];
 
     /// <summary>The guard of the forward step.</summary>
     public GuardDefinition Guard { get; init; } = GuardDefinition.Always;
