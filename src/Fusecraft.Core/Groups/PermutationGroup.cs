@@ -19,7 +19,7 @@ public sealed partial class PermutationGroup
     {
         Generators = generators;
         Degree = degree;
-        _chain = new Lazy<StabilizerChain>(() => chain ?? StabilizerChain.Build(this));
+        _chain = new Lazy<StabilizerChain>(() => chain ?? StabilizerChain.Build(this, new ChainOptions { OrderBound = OrderBound }));
         _ascendingChain = new Lazy<StabilizerChain>(() => Chain.IsLexicographic ? Chain : StabilizerChain.Build(this, new ChainOptions { OrderBound = Chain.Order }));
         _orbits = new Lazy<OrbitPartition>(() => new OrbitPartition(Generators, Degree));
     }
@@ -103,6 +103,13 @@ public sealed partial class PermutationGroup
         var level = chain.Base.TakeWhile(prefix.Contains).Count();
         return FromChain(chain.GeneratorsOf(level), chain.Below(level, isLexicographic: true));
     }
+
+    /// <summary>A number that the order is known not to exceed; null where none is known.</summary>
+    internal BigInteger? OrderBound { get; private init; }
+
+    /// <summary>A group whose order is known by a theorem; the chain need only reach it to be proven.</summary>
+    internal static PermutationGroup OfKnownOrder(IEnumerable<Permutation> generators, int degree, BigInteger order) =>
+        new([.. generators], degree, null) { OrderBound = order };
 
     /// <summary>A group whose proven chain is at hand.</summary>
     internal static PermutationGroup FromChain(ImmutableArray<Permutation> generators, StabilizerChain chain) => new(generators, chain.Degree, chain);
