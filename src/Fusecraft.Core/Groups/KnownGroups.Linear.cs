@@ -19,7 +19,7 @@ public static partial class KnownGroups
         var generators = Transvections(field, dimension).Append(Scaling(field, dimension)).Select(matrix => FromFunction(vectors, vector => Apply(field, matrix, vector)))
             .Append(FromFunction(vectors, vector => vector - (vector % fieldSize) + field.Add(vector % fieldSize, 1)))
             .Where(generator => !generator.IsIdentity);
-        return PermutationGroup.OfKnownOrder(generators, vectors, vectors * OrderOfGeneralLinear(dimension, fieldSize));
+        return OfKnownOrder(generators, vectors, vectors * OrderOfGeneralLinear(dimension, fieldSize));
     }
 
     /// <summary>
@@ -59,7 +59,7 @@ public static partial class KnownGroups
         var points = numberOf.Keys.ToArray();
         var matrices = isSpecial ? Transvections(field, dimension) : Transvections(field, dimension).Append(Scaling(field, dimension));
         var generators = matrices.Select(matrix => FromFunction(points.Length, point => numberOf[Normalized(field, Apply(field, matrix, points[point]))])).Where(generator => !generator.IsIdentity);
-        return PermutationGroup.OfKnownOrder(generators, points.Length, order);
+        return OfKnownOrder(generators, points.Length, order);
     }
 
     private static (FiniteField Field, int Vectors) Space(int dimension, int fieldSize)

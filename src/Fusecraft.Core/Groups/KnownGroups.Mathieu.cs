@@ -30,5 +30,5 @@ public static partial class KnownGroups
     public static PermutationGroup MathieuM24() => Given(24, 244_823_040, M23Cycle, M23Other, "(1 24)(2 23)(3 12)(4 16)(5 18)(6 10)(7 20)(8 14)(9 21)(11 17)(13 22)(15 19)");
 
     private static PermutationGroup Given(int degree, int order, params string[] generators) =>
-        PermutationGroup.OfKnownOrder(generators.Select(Permutation.Parse), degree, order);
+        OfKnownOrder(generators.Select(Permutation.Parse), degree, order);
 }

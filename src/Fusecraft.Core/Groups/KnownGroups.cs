@@ -11,7 +11,7 @@ public static partial class KnownGroups
     public static PermutationGroup Symmetric(int n)
     {
         RequireDegree(n, 0);
-        return PermutationGroup.OfKnownOrder(n < 2 ? [] : n == 2 ? [Permutation.FromCycle(0, 1)] : [Cycle(0, n), Permutation.FromCycle(0, 1)], n, Factorial(n));
+        return OfKnownOrder(n < 2 ? [] : n == 2 ? [Permutation.FromCycle(0, 1)] : [Cycle(0, n), Permutation.FromCycle(0, 1)], n, Factorial(n));
     }
 
     /// <summary>All even permutations of n points; order n!/2 for n from 2 on.</summary>
@@ -22,8 +22,8 @@ public static partial class KnownGroups
 
         // (0 1 2) and a long cycle of odd length, over all points or over all but the first.
         return n < 3
-            ? PermutationGroup.OfKnownOrder([], n, 1)
-            : PermutationGroup.OfKnownOrder([Permutation.FromCycle(0, 1, 2), n % 2 == 1 ? Cycle(0, n) : Cycle(1, n - 1)], n, Factorial(n) / 2);
+            ? OfKnownOrder([], n, 1)
+            : OfKnownOrder([Permutation.FromCycle(0, 1, 2), n % 2 == 1 ? Cycle(0, n) : Cycle(1, n - 1)], n, Factorial(n) / 2);
     }
 
     /// <summary>The powers of one cycle of n points; order n.</summary>
@@ -31,7 +31,7 @@ public static partial class KnownGroups
     public static PermutationGroup Cyclic(int n)
     {
         RequireDegree(n, 1);
-        return PermutationGroup.OfKnownOrder([Cycle(0, n)], n, n);
+        return OfKnownOrder([Cycle(0, n)], n, n);
     }
 
     /// <summary>The rotations and reflections of the regular n-gon on its corners, numbered round; order 2n.</summary>
@@ -45,7 +45,7 @@ public static partial class KnownGroups
             reflection[i] = n - 1 - i;
         }
 
-        return PermutationGroup.OfKnownOrder([Cycle(0, n), Permutation.FromTrustedImages<int>(reflection)], n, 2 * n);
+        return OfKnownOrder([Cycle(0, n), Permutation.FromTrustedImages<int>(reflection)], n, 2 * n);
     }
 
     /// <summary>Both groups side by side: the first on its points, the second on the points behind them. The order is the product of the orders.</summary>
@@ -55,7 +55,7 @@ public static partial class KnownGroups
         ArgumentNullException.ThrowIfNull(first);
         ArgumentNullException.ThrowIfNull(second);
         RequireProductDegree((long)first.Degree + second.Degree);
-        return PermutationGroup.OfKnownOrder(
+        return OfKnownOrder(
             [.. first.Generators, .. second.Generators.Select(generator => Shifted(generator, second.Degree, first.Degree))], first.Degree + second.Degree, first.Order * second.Order);
     }
 
@@ -74,7 +74,7 @@ public static partial class KnownGroups
         // One copy of the lower group in each orbit of the upper one; the others are its conjugates.
         var copies = upper.Orbits.SelectMany(orbit => lower.Generators.Select(generator => Shifted(generator, n, orbit[0] * n)));
         var exchanges = upper.Generators.Select(generator => FromFunction(n * m, point => (generator[point / n] * n) + (point % n)));
-        return PermutationGroup.OfKnownOrder([.. copies, .. exchanges], n * m, BigInteger.Pow(lower.Order, m) * upper.Order);
+        return OfKnownOrder([.. copies, .. exchanges], n * m, BigInteger.Pow(lower.Order, m) * upper.Order);
     }
 
     /// <summary>
@@ -101,8 +101,10 @@ public static partial class KnownGroups
             return tuple + ((generator[entry] - entry) * places[orbit[0]]);
         })));
         var exchanges = upper.Generators.Select(generator => FromFunction(degree, tuple => Enumerable.Range(0, m).Sum(place => tuple / places[place] % n * places[generator[place]])));
-        return PermutationGroup.OfKnownOrder([.. inPlaces, .. exchanges], degree, BigInteger.Pow(lower.Order, m) * upper.Order);
+        return OfKnownOrder([.. inPlaces, .. exchanges], degree, BigInteger.Pow(lower.Order, m) * upper.Order);
     }
+
+    private static PermutationGroup OfKnownOrder(IEnumerable<Permutation> generators, int degree, BigInteger order) => PermutationGroup.FromOrder([.. generators], degree, order);
 
     private static Permutation Cycle(int first, int length) => FromFunction(first + length, point => point < first ? point : first + ((point - first + 1) % length));
 

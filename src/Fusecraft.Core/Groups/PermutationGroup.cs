@@ -15,11 +15,14 @@ public sealed partial class PermutationGroup
     private readonly Lazy<StabilizerChain> _ascendingChain;
     private readonly Lazy<OrbitPartition> _orbits;
 
-    private PermutationGroup(ImmutableArray<Permutation> generators, int degree, StabilizerChain? chain)
+    private readonly BigInteger? _knownOrder;
+
+    private PermutationGroup(ImmutableArray<Permutation> generators, int degree, StabilizerChain? chain, BigInteger? knownOrder = null)
     {
+        _knownOrder = knownOrder;
         Generators = generators;
         Degree = degree;
-        _chain = new Lazy<StabilizerChain>(() => chain ?? StabilizerChain.Build(this, new ChainOptions { OrderBound = OrderBound }));
+        _chain = new Lazy<StabilizerChain>(() => chain ?? StabilizerChain.Build(this, new ChainOptions { OrderBound = knownOrder }));
         _ascendingChain = new Lazy<StabilizerChain>(() => Chain.IsLexicographic ? Chain : StabilizerChain.Build(this, new ChainOptions { OrderBound = Chain.Order }));
         _orbits = new Lazy<OrbitPartition>(() => new OrbitPartition(Generators, Degree));
     }
@@ -34,7 +37,7 @@ public sealed partial class PermutationGroup
     public StabilizerChain Chain => _chain.Value;
 
     /// <summary>The number of members.</summary>
-    public BigInteger Order => Chain.Order;
+    public BigInteger Order => _knownOrder ?? Chain.Order;
 
     /// <summary>The number of members as prime powers.</summary>
     public FactoredInteger FactoredOrder => FactoredInteger.FromFactors(Chain.OrbitLengths.AsSpan());
@@ -99,17 +102,25 @@ public sealed partial class PermutationGroup
     {
         StabilizerChain.RequirePrefix(points, Degree, nameof(points));
         int[] prefix = [.. points];
-        var chain = StabilizerChain.Build(this, new ChainOptions { BasePrefix = prefix, OrderBound = _chain.IsValueCreated ? Order : null });
+        var chain = ChainFrom(prefix);
         var level = chain.Base.TakeWhile(prefix.Contains).Count();
         return FromChain(chain.GeneratorsOf(level), chain.Below(level, isLexicographic: true));
     }
 
-    /// <summary>A number that the order is known not to exceed; null where none is known.</summary>
-    internal BigInteger? OrderBound { get; private init; }
+    /// <summary>The proven chain whose base begins with the given points, as far as they are not fixed by those before; then follow 0, 1, 2, … Built anew each time.</summary>
+    /// <param name="points">Points in 0 … Degree-1, distinct.</param>
+    /// <exception cref="ArgumentException">A point is outside 0 … Degree-1 or given twice.</exception>
+    public StabilizerChain ChainWithBase(params ReadOnlySpan<int> points)
+    {
+        StabilizerChain.RequirePrefix(points, Degree, nameof(points));
+        return ChainFrom([.. points]);
+    }
 
-    /// <summary>A group whose order is known by a theorem; the chain need only reach it to be proven.</summary>
-    internal static PermutationGroup OfKnownOrder(IEnumerable<Permutation> generators, int degree, BigInteger order) =>
-        new([.. generators], degree, null) { OrderBound = order };
+    internal StabilizerChain ChainFrom(int[] prefix, CancellationToken cancellationToken = default) => StabilizerChain.Build(
+        this, new ChainOptions { BasePrefix = prefix, OrderBound = _knownOrder ?? (_chain.IsValueCreated ? Order : null) }, cancellationToken);
+
+    /// <summary>A group whose order is proven; its chain is built when asked for, with no further proof.</summary>
+    internal static PermutationGroup FromOrder(ImmutableArray<Permutation> generators, int degree, BigInteger order) => new(generators, degree, null, order);
 
     /// <summary>A group whose proven chain is at hand.</summary>
     internal static PermutationGroup FromChain(ImmutableArray<Permutation> generators, StabilizerChain chain) => new(generators, chain.Degree, chain);
