@@ -114,7 +114,7 @@ public class StructureTests
         Assert.Throws<ArgumentException>(() => group.ActionOn([0, 1]));
         Assert.Throws<ArgumentException>(() => group.ActionOn([0, 0]));
         Assert.Throws<ArgumentException>(() => group.BlockSystemJoining(0, 3));
-        Assert.Throws<ArgumentException>(() => group.ActionOn(KnownGroups.Cyclic(6).BlockSystemJoining(0, 3)));
+        Assert.Throws<ArgumentException>(() => group.ActionOn(KnownGroups.Cyclic(6).BlockSystemJoining(0, 2)));
         Assert.Throws<ArgumentException>(() => group.ActionOn([0, 1, 2]).Map(Permutation.Parse("(1 2)")));
     }
 
