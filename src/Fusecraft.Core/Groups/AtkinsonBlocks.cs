@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using Fusecraft.Permutations;
 
 namespace Fusecraft.Groups;
 
@@ -9,34 +8,58 @@ internal static class AtkinsonBlocks
 {
     public static BlockSystem Join(PermutationGroup group, ImmutableArray<int> orbit, IEnumerable<(int A, int B)> pairs)
     {
-        var parent = Enumerable.Range(0, group.Degree).ToArray();
-        var queue = new Queue<(int A, int B)>(pairs);
-        while (queue.TryDequeue(out var pair))
+        int[][] generators = [.. group.Generators.Select(generator =>
         {
-            var (a, b) = (Find(pair.A), Find(pair.B));
+            var images = new int[group.Degree];
+            generator.CopyImages(images);
+            return images;
+        })];
+        var parent = Join(generators, group.Degree, pairs, out _);
+        return new BlockSystem([.. orbit.GroupBy(point => Root(parent, point)).Select(part => part.Order().ToImmutableArray()).OrderBy(part => part[0])]);
+    }
+
+    /// <summary>The same for image lists: gives for each point another one of its part, or itself; following these leads to the part's root.</summary>
+    /// <param name="generators">Image lists.</param>
+    /// <param name="size">Points are 0 … size-1.</param>
+    /// <param name="pairs">Points to unite.</param>
+    /// <param name="unions">How many fewer parts there are than points.</param>
+    public static int[] Join(int[][] generators, int size, IEnumerable<(int A, int B)> pairs, out int unions)
+    {
+        var parent = new int[size];
+        for (var point = 0; point < size; point++)
+        {
+            parent[point] = point;
+        }
+
+        unions = 0;
+        var open = new Stack<(int A, int B)>(pairs);
+        while (unions < size - 1 && open.TryPop(out var pair))
+        {
+            var (a, b) = (Root(parent, pair.A), Root(parent, pair.B));
             if (a == b)
             {
                 continue;
             }
 
             parent[b] = a;
-            foreach (var generator in group.Generators)
+            unions++;
+            foreach (var generator in generators)
             {
-                queue.Enqueue((generator[pair.A], generator[pair.B]));
+                open.Push((generator[pair.A], generator[pair.B]));
             }
         }
 
-        return new BlockSystem([.. orbit.GroupBy(Find).Select(part => part.Order().ToImmutableArray()).OrderBy(part => part[0])]);
+        return parent;
+    }
 
-        int Find(int point)
+    public static int Root(int[] parent, int point)
+    {
+        while (parent[point] != point)
         {
-            while (parent[point] != point)
-            {
-                parent[point] = parent[parent[point]];
-                point = parent[point];
-            }
-
-            return point;
+            parent[point] = parent[parent[point]];
+            point = parent[point];
         }
+
+        return point;
     }
 }

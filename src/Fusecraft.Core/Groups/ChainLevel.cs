@@ -16,6 +16,7 @@ internal sealed class ChainLevel<T>
     private readonly List<int> _orbit = [];
     private readonly List<(int Parent, int Generator)> _edges = [];
     private readonly List<int> _checked = [];
+    private T[]? _orbitMarks;
 
     /// <summary>Starts a level whose orbit is the base point alone.</summary>
     public ChainLevel(int point, int position, ReadOnlySpan<T> identity, int degree)
@@ -55,6 +56,9 @@ internal sealed class ChainLevel<T>
     public int Quiet { get; set; }
 
     public int OrbitLength => _orbit.Count;
+
+    /// <summary>For each point all bits set where it is in the orbit, none elsewhere; made on first use.</summary>
+    public ReadOnlySpan<T> OrbitMarks => _orbitMarks ??= MarkOrbit();
 
     public int OrbitPoint(int index) => _orbit[index];
 
@@ -110,7 +114,19 @@ internal sealed class ChainLevel<T>
     {
         Slots[point] = _orbit.Count;
         _orbit.Add(point);
+        _orbitMarks = null;
         _edges.Add((parent, generator));
         _checked.Add(0);
+    }
+
+    private T[] MarkOrbit()
+    {
+        var marks = new T[Inverses.Stride];
+        foreach (var point in _orbit)
+        {
+            marks[point] = T.AllBitsSet;
+        }
+
+        return marks;
     }
 }

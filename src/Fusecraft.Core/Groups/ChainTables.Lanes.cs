@@ -14,6 +14,7 @@ internal sealed class ChainTables<T> : ChainTables
     where T : unmanaged, IBinaryInteger<T>
 {
     private const int LanesOnStack = 256;
+    private const int FewWords = 16;
 
     private readonly T[] _identity;
     private ChainLevel<T>[] _levels = new ChainLevel<T>[16];
@@ -29,6 +30,9 @@ internal sealed class ChainTables<T> : ChainTables
     public override int Degree { get; }
 
     public int Stride => _identity.Length;
+
+    // Of a set of points, a bit each.
+    private int Words => (Stride + 63) / 64;
 
     public ReadOnlySpan<T> Identity => _identity;
 
@@ -140,47 +144,44 @@ internal sealed class ChainTables<T> : ChainTables
 
         // A member is u_k … u_2 u_1 with one representative a level. With c = u_(l-1) … u_1 the image of base point l can be c[x] for x in the orbit,
         // so its digit counts the places y below the image whose origin under c lies in the orbit. Kept is the inverse of c, which gives origins.
-        using var scratch = new Scratch<T>(Stride);
-        var origins = scratch.Span;
+        using var scratch = new Scratch<T>(2 * Stride);
+        var origins = scratch.Span[..Stride];
+        var marks = scratch.Span[Stride..];
+        Span<ulong> possible = stackalloc ulong[FewWords];
+        possible = Words <= FewWords ? possible[..Words] : new ulong[Words];
         _identity.CopyTo(origins);
         for (var i = 0; i < _count; i++)
         {
             var level = _levels[i];
             var image = permutation[level.Point];
-            var digit = 0;
-            for (var y = 0; y < image; y++)
-            {
-                digit += level.Slots[int.CreateTruncating(origins[y])] >= 0 ? 1 : 0;
-            }
-
-            digits[i] = digit;
+            PossibleImages(level, origins, marks, possible);
+            digits[i] = PointBits.CountBelow(possible, image);
             Lanes.ComposePadded<T>(origins, level.Inverses[level.Slots[int.CreateTruncating(origins[image])]], origins);
         }
 
         return true;
     }
 
-    public override Permutation FromDigits(ReadOnlySpan<int> digits)
+    public override void WriteMember(ReadOnlySpan<int> digits, Span<int> images)
     {
         using var scratch = new Scratch<T>(2 * Stride);
         var origins = scratch.Span[..Stride];
-        var images = scratch.Span[Stride..];
+        var marks = scratch.Span[Stride..];
+        Span<ulong> possible = stackalloc ulong[FewWords];
+        possible = Words <= FewWords ? possible[..Words] : new ulong[Words];
         _identity.CopyTo(origins);
         for (var i = 0; i < _count; i++)
         {
             var level = _levels[i];
-            var y = -1;
-            for (var left = digits[i]; left >= 0;)
-            {
-                y++;
-                left -= level.Slots[int.CreateTruncating(origins[y])] >= 0 ? 1 : 0;
-            }
-
-            Lanes.ComposePadded<T>(origins, level.Inverses[level.Slots[int.CreateTruncating(origins[y])]], origins);
+            PossibleImages(level, origins, marks, possible);
+            var origin = origins[PointBits.Select(possible, digits[i])];
+            Lanes.ComposePadded<T>(origins, level.Inverses[level.Slots[int.CreateTruncating(origin)]], origins);
         }
 
-        Lanes.InvertPadded<T>(origins, images);
-        return Permutation.FromTrustedImages<T>(images);
+        for (var point = 0; point < Degree; point++)
+        {
+            images[int.CreateTruncating(origins[point])] = point;
+        }
     }
 
     public override ChainTables Below(int level)
@@ -192,6 +193,13 @@ internal sealed class ChainTables<T> : ChainTables
         }
 
         return below;
+    }
+
+    // The points y whose origin lies in the level's orbit: where the base point can go, given where those before go.
+    private static void PossibleImages(ChainLevel<T> level, ReadOnlySpan<T> origins, Span<T> marks, Span<ulong> possible)
+    {
+        Lanes.ComposePadded(origins, level.OrbitMarks, marks);
+        Lanes.HighBits<T>(marks, possible);
     }
 
     /// <summary>Writes a permutation that moves nothing beyond the degree as padded lanes.</summary>

@@ -33,11 +33,34 @@ internal abstract class ChainTables
     /// <summary>The place of the image of each base point among the possible ones in ascending order, given the earlier images. False when the permutation is no member.</summary>
     public abstract bool TryGetDigits(Permutation permutation, Span<int> digits);
 
-    /// <summary>The member with the given digits; see <see cref="TryGetDigits"/>.</summary>
-    public abstract Permutation FromDigits(ReadOnlySpan<int> digits);
+    /// <summary>Writes the images of the points under the member with the given digits; see <see cref="TryGetDigits"/>. Without allocation for up to 1,024 points.</summary>
+    public abstract void WriteMember(ReadOnlySpan<int> digits, Span<int> images);
 
     /// <summary>The chain of the stabilizer of the first base points; it shares the levels.</summary>
     public abstract ChainTables Below(int level);
+
+    /// <summary>The member with the given digits; see <see cref="TryGetDigits"/>.</summary>
+    public Permutation FromDigits(ReadOnlySpan<int> digits)
+    {
+        using var images = new Scratch<int>(Degree);
+        WriteMember(digits, images.Span);
+        return Permutation.FromTrustedImages<int>(images.Span);
+    }
+
+    /// <summary>The natural logarithm of the order, nearly.</summary>
+    public double LogOrder
+    {
+        get
+        {
+            var sum = 0.0;
+            for (var level = 0; level < Count; level++)
+            {
+                sum += Math.Log(OrbitLength(level));
+            }
+
+            return sum;
+        }
+    }
 
     public BigInteger Order
     {

@@ -44,15 +44,32 @@ public sealed partial class PermutationGroup
     /// <summary>A member drawn at random, each equally likely. The same numbers drawn give the same member, however the chain was built.</summary>
     public Permutation RandomElement(SeededRandom random)
     {
+        using var images = new Scratch<int>(Degree);
+        RandomElement(random, images.Span);
+        return Permutation.FromTrustedImages<int>(images.Span);
+    }
+
+    /// <summary>As <see cref="RandomElement(SeededRandom)"/>, written as image list; the same numbers drawn give the same member. Allocates nothing for up to 1,024 points.</summary>
+    /// <param name="random">Where the numbers come from.</param>
+    /// <param name="images">At least as many places as the degree; those beyond are left alone. Place i takes the image of point i.</param>
+    /// <exception cref="ArgumentException">There are fewer places than points.</exception>
+    public void RandomElement(SeededRandom random, Span<int> images)
+    {
         ArgumentNullException.ThrowIfNull(random);
-        var chain = _ascendingChain.Value;
-        using var digits = new Scratch<int>(chain.Base.Length);
-        for (var i = 0; i < chain.Base.Length; i++)
+        if (images.Length < Degree)
         {
-            digits.Span[i] = random.NextInt32(chain.OrbitLengths[i]);
+            throw new ArgumentException($"There are {images.Length} places for the images of {Degree} points.", nameof(images));
         }
 
-        return chain.Tables.FromDigits(digits.Span);
+        var chain = _ascendingChain.Value;
+        using var scratch = new Scratch<int>(chain.OrbitLengths.Length);
+        var digits = scratch.Span;
+        for (var i = 0; i < digits.Length; i++)
+        {
+            digits[i] = random.NextInt32(chain.OrbitLengths[i]);
+        }
+
+        chain.Tables.WriteMember(digits, images);
     }
 
     /// <summary>The position, from 0, of a member among all members in lexicographic order of image lists (the image of point 0 first). The inverse of <see cref="Unrank"/>.</summary>

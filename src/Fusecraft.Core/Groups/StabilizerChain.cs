@@ -15,6 +15,9 @@ namespace Fusecraft.Groups;
 /// </remarks>
 public sealed class StabilizerChain
 {
+    /// <summary>With fewer points a proof by Schreier generators is faster than a bound.</summary>
+    private const int FewestPointsForBound = 64;
+
     private readonly ChainTables _tables;
 
     internal StabilizerChain(ChainTables tables, ChainProof proof, bool isLexicographic)
@@ -67,6 +70,17 @@ public sealed class StabilizerChain
         if (options.ErrorBits is < 1 or > 1000)
         {
             throw new ArgumentException($"ErrorBits is {options.ErrorBits}; it must be in 1 … 1000.", nameof(options));
+        }
+
+        if (GiantRecognition.Recognise(group, prefix, cancellationToken) is { } giant)
+        {
+            var isAscending = Enumerable.Range(1, giant.Count == 0 ? 0 : giant.Count - 1).All(level => giant.BasePoint(level - 1) < giant.BasePoint(level));
+            return new StabilizerChain(giant, ChainProof.Proven, isAscending);
+        }
+
+        if (options.OrderBound is null && options.Verify && group.Degree >= FewestPointsForBound)
+        {
+            options = options with { OrderBound = SubdirectBound.Of(group, cancellationToken) };
         }
 
         return group.Degree <= 256
@@ -191,6 +205,22 @@ public sealed class StabilizerChain
     private static StabilizerChain Build<T>(PermutationGroup group, int[] prefix, ChainOptions options, CancellationToken cancellation)
         where T : unmanaged, IBinaryInteger<T>
     {
+        if (options.OrderBound is not null)
+        {
+            var quick = new ChainBuilder<T>(group.Degree, prefix, options.OrderBound);
+            var row = new T[quick.Stride];
+            foreach (var generator in group.Generators)
+            {
+                generator.CopyLanes<T>(row);
+                quick.AddUnsettled(row);
+            }
+
+            if (quick.TryReachBound(cancellation))
+            {
+                return quick.ToChain();
+            }
+        }
+
         var builder = new ChainBuilder<T>(group.Degree, prefix, options.OrderBound);
         var lanes = new T[builder.Stride];
         for (var i = 0; i < group.Generators.Length; i++)

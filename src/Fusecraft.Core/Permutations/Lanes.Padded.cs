@@ -60,6 +60,17 @@ internal static partial class Lanes
         }
     }
 
+    /// <summary>The highest bit of each lane of a padded list, sixty-four to a word.</summary>
+    public static void HighBits<T>(ReadOnlySpan<T> lanes, Span<ulong> bits)
+        where T : unmanaged, IBinaryInteger<T>
+    {
+        bits.Clear();
+        for (var i = 0; i < lanes.Length; i += Vector256<T>.Count)
+        {
+            bits[i >> 6] |= (ulong)Vector256.LoadUnsafe(ref MemoryMarshal.GetReference(lanes), (nuint)i).ExtractMostSignificantBits() << (i & 63);
+        }
+    }
+
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static void ComposePadded(ref byte p, ref byte q, ref byte result, int length)
     {

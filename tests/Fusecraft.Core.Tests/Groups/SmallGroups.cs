@@ -72,8 +72,28 @@ internal static class SmallGroups
     {
         ChainTables<byte> narrow => narrow.FindFault(chain.Proof.IsProven),
         ChainTables<ushort> wide => wide.FindFault(chain.Proof.IsProven),
+        GiantTables giant => FindFault(giant),
         _ => "Unknown lanes.",
     };
+
+    private static string? FindFault(GiantTables chain)
+    {
+        for (var level = 0; level < chain.Count; level++)
+        {
+            for (var index = 0; index < chain.OrbitLength(level); index++)
+            {
+                var point = chain.OrbitPoint(level, index);
+                var representative = chain.Representative(level, point);
+                var fixesEarlier = Enumerable.Range(0, level).All(earlier => representative[chain.BasePoint(earlier)] == chain.BasePoint(earlier));
+                if (chain.OrbitIndex(level, point) != index || representative[chain.BasePoint(level)] != point || !fixesEarlier || !chain.Contains(representative))
+                {
+                    return $"Level {level}: the representative of {point} is wrong.";
+                }
+            }
+        }
+
+        return null;
+    }
 
     private static Permutation Doubled(Permutation permutation, int degree) =>
         Permutation.FromImages([.. Enumerable.Range(0, 2 * degree).Select(i => permutation[i % degree] + (i / degree * degree))]);
