@@ -150,6 +150,7 @@ internal sealed class ChainBuilder<T>
     /// </summary>
     public bool TryReachBound(CancellationToken cancellation = default)
     {
+        _tables.SharesGenerators = true;
         for (var quiet = 0; quiet < QuietForBound && _tables.Count > 0; quiet++)
         {
             cancellation.ThrowIfCancellationRequested();

@@ -127,7 +127,7 @@ internal sealed class ChainTables<T> : ChainTables
         return Permutation.FromTrustedImages<T>(row).Inverse();
     }
 
-    public override IEnumerable<Permutation> Generators(int level)
+    public override IEnumerable<Permutation> OwnGenerators(int level)
     {
         for (var k = 0; k < _levels[level].Generators.Count; k++)
         {
@@ -186,7 +186,7 @@ internal sealed class ChainTables<T> : ChainTables
 
     public override ChainTables Below(int level)
     {
-        var below = new ChainTables<T>(Degree);
+        var below = new ChainTables<T>(Degree) { SharesGenerators = SharesGenerators };
         for (var i = level; i < _count; i++)
         {
             below.Insert(i - level, _levels[i]);

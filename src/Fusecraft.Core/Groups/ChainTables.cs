@@ -22,7 +22,15 @@ internal abstract class ChainTables
     /// <summary>The stored representative that takes the base point to an orbit point, which must be one.</summary>
     public abstract Permutation Representative(int level, int point);
 
-    public abstract IEnumerable<Permutation> Generators(int level);
+    /// <summary>True when a level's own generators need not generate its group, but do so with those of the levels below.</summary>
+    public bool SharesGenerators { get; set; }
+
+    /// <summary>The generators found for a level.</summary>
+    public abstract IEnumerable<Permutation> OwnGenerators(int level);
+
+    /// <summary>Generators of the group of a level.</summary>
+    public IEnumerable<Permutation> Generators(int level) =>
+        SharesGenerators ? Enumerable.Range(level, Count - level).SelectMany(OwnGenerators) : OwnGenerators(level);
 
     /// <summary>True when the permutation is a product of representatives. Without allocation.</summary>
     public abstract bool Contains(Permutation permutation);

@@ -47,7 +47,7 @@ internal sealed class GiantTables : ChainTables
         ? Permutation.Identity
         : _isAlternating ? Permutation.FromCycle(_order[level], point, ThirdPoint(point)) : Permutation.FromCycle(_order[level], point);
 
-    public override IEnumerable<Permutation> Generators(int level)
+    public override IEnumerable<Permutation> OwnGenerators(int level)
     {
         var rest = _order.AsSpan(level);
         if (!_isAlternating)

@@ -47,7 +47,7 @@ public sealed class StabilizerChain
 
     /// <summary>A strong generating set: for each level those that fix the base points before generate the whole subgroup that does. Without repetitions.</summary>
     public ImmutableArray<Permutation> StrongGenerators =>
-        [.. Enumerable.Range(0, _tables.Count).SelectMany(_tables.Generators).Distinct()];
+        [.. Enumerable.Range(0, _tables.Count).SelectMany(_tables.OwnGenerators).Distinct()];
 
     internal ChainTables Tables => _tables;
 
