@@ -37,20 +37,24 @@ public class GroupComparisonTests
         group => group.IsTransitive ? Lines(Enumerable.Range(1, group.Degree - 1).Select(point => group.BlockSystemJoining(0, point).ToString())) : "",
         answer => Lines((answer.Joins ?? []).Select(Parts)));
 
+    // SymPy gives a primitive group the one part of all points as its only minimal system; here it has none.
     [SymPyFact]
     public void Minimal_block_systems_agree() => Compare(
         group => group.IsTransitive ? Lines(group.MinimalBlockSystems(0).Select(system => system.ToString()).Order(StringComparer.Ordinal)) : "",
-        answer => Lines((answer.MinimalSystems ?? []).Select(Parts).Order(StringComparer.Ordinal)));
+        answer => Lines((answer.MinimalSystems ?? []).Where(labels => labels.Distinct().Count() > 1).Select(Parts).Order(StringComparer.Ordinal)));
 
     private static void Compare(Func<PermutationGroup, string> ours, Func<SymPyAnswer, string> theirs)
     {
         Assert.Equal(Count, _answers.Value.Length);
-        Assert.Empty(
-            from pair in ReferenceGroups.All.Zip(_answers.Value)
-            let our = ours(pair.First.Group)
-            let their = theirs(pair.Second)
-            where our != their
-            select $"{pair.First.Kind}, degree {pair.First.Group.Degree}, generators {string.Join("; ", pair.First.Group.Generators)}: {our} here, {their} from SymPy");
+        List<string> disagreements =
+        [
+            .. from pair in ReferenceGroups.All.Zip(_answers.Value)
+               let our = ours(pair.First.Group)
+               let their = theirs(pair.Second)
+               where our != their
+               select $"{pair.First.Kind}, degree {pair.First.Group.Degree}, generators {string.Join("; ", pair.First.Group.Generators)}: {our} here, {their} from SymPy",
+        ];
+        Assert.True(disagreements.Count == 0, Lines(disagreements));
     }
 
     private static SymPyAnswer[] AskSymPy()
