@@ -13,13 +13,15 @@ public class ColouringTests
     [InlineData(3)]
     [InlineData(4)]
     [InlineData(5)]
-    public void Every_set_of_points_under_every_small_group_has_the_stabilizer_that_its_members_tell(int degree)
+    [InlineData(6)]
+    public void Sets_of_points_under_every_small_group_has_the_stabilizer_that_its_members_tell(int degree)
     {
         foreach (var (group, members) in QueriesOracle.GroupsOfDegree(degree))
         {
-            for (var bits = 0; bits < 1 << degree; bits++)
+            // Of six points every fifth set.
+            for (var bits = 0; bits < 1 << degree; bits += degree < 6 ? 1 : 5)
             {
-                int[] set = [.. Enumerable.Range(0, degree).Where(i => (bits >> i & 1) != 0)];
+                int[] set = [.. Enumerable.Range(0, degree).Where(i => ((bits >> i) & 1) != 0)];
                 Assert.True(QueriesOracle.Has(group.SetwiseStabilizer(set), members.Where(p => set.All(i => set.Contains(p[i])))));
                 Assert.Equal(members.Select(p => string.Join(',', set.Select(i => p[i]).Order())).Distinct().Count(), group.OrbitSizeOfSet(set));
             }

@@ -25,15 +25,37 @@ public class ConjugacyTests
         }
     }
 
-    [Fact]
-    public void Every_permutation_of_five_points_under_every_small_group_has_the_centralizer_that_its_members_tell()
+    [Theory]
+    [InlineData(5)]
+    [InlineData(6)]
+    public void Many_permutations_under_every_small_group_have_the_centralizer_and_the_conjugates_that_its_members_tell(int degree)
     {
-        Permutation[] all = [.. SmallGroups.AllOfDegree(5)];
-        foreach (var (group, members) in QueriesOracle.GroupsOfDegree(5))
+        Permutation[] all = [.. SmallGroups.AllOfDegree(degree)];
+        foreach (var (group, members) in QueriesOracle.GroupsOfDegree(degree))
         {
-            foreach (var a in all)
+            for (var i = members.Count % 3; i < all.Length; i += degree == 5 ? 3 : 31)
             {
-                Assert.True(QueriesOracle.Has(group.Centralizer(a), members.Where(p => p * a == a * p)));
+                Assert.True(QueriesOracle.Has(group.Centralizer(all[i]), members.Where(p => p * all[i] == all[i] * p)));
+                RequireConjugator(group, members, all[i], all[i].ConjugateBy(all[^(1 + (i * 10 % all.Length))]));
+            }
+        }
+    }
+
+    [Theory]
+    [InlineData(5, 11)]
+    [InlineData(6, 13)]
+    public void Small_groups_meet_in_their_common_members(int degree, int stride)
+    {
+        var groups = QueriesOracle.GroupsOfDegree(degree).ToList();
+        var renaming = Permutation.FromCycle([.. Enumerable.Range(0, degree)]);
+        for (var i = 0; i < groups.Count; i++)
+        {
+            for (var k = i % stride; k < groups.Count; k += stride)
+            {
+                var (group, members) = groups[i];
+                var other = PermutationGroup.Generate(groups[k].Group.Generators.Select(p => p.ConjugateBy(renaming)), degree);
+                var others = groups[k].Members.Select(p => p.ConjugateBy(renaming)).ToHashSet();
+                Assert.True(QueriesOracle.Has(group.Intersection(other), members.Where(others.Contains)));
             }
         }
     }
@@ -66,7 +88,7 @@ public class ConjugacyTests
     }
 
     [Fact]
-    public void Every_two_groups_made_by_two_permutations_of_four_points_meet_in_their_common_members()
+    public void Every_two_groups_of_four_points_meet_in_their_common_members()
     {
         var groups = QueriesOracle.GroupsOfDegree(4).ToList();
         foreach (var (group, members) in groups)

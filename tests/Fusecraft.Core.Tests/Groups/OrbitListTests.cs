@@ -10,6 +10,7 @@ public class OrbitListTests
     [InlineData(3)]
     [InlineData(4)]
     [InlineData(5)]
+    [InlineData(6)]
     public void Every_small_group_carries_sets_and_lists_to_where_its_members_tell(int degree)
     {
         int[][] lists = [[], [degree - 1], [1, 0], [2, 0, 1], [.. Enumerable.Range(0, degree)]];

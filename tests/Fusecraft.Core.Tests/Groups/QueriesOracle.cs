@@ -7,22 +7,15 @@ namespace Fusecraft.Tests.Groups;
 /// <summary>Small groups to try every question on, and what the answers must be by going through all members.</summary>
 internal static class QueriesOracle
 {
-    /// <summary>The different groups made by two permutations of so many points, the first one of each cycle type (that is, up to renaming points).</summary>
+    private static readonly Lazy<SymmetricTable>[] Tables = [.. Enumerable.Range(0, 7).Select(degree => new Lazy<SymmetricTable>(() => new SymmetricTable(degree)))];
+
+    public static SymmetricTable TableOf(int degree) => Tables[degree].Value;
+
+    /// <summary>All groups of permutations of so many points, up to five; of six points, one of each class of groups that are equal but for the numbering of the points.</summary>
     public static IEnumerable<(PermutationGroup Group, HashSet<Permutation> Members)> GroupsOfDegree(int degree)
     {
-        Permutation[] all = [.. SmallGroups.AllOfDegree(degree)];
-        var met = new HashSet<string>();
-        foreach (var first in all.GroupBy(p => p.CycleType).Select(group => group.First()))
-        {
-            foreach (var second in all)
-            {
-                var members = SmallGroups.Closure([first, second]);
-                if (met.Add(string.Concat(all.Select(p => members.Contains(p) ? '1' : '0'))))
-                {
-                    yield return (PermutationGroup.Generate([first, second], degree), members);
-                }
-            }
-        }
+        var table = TableOf(degree);
+        return (degree < 6 ? table.Subgroups() : table.SubgroupClasses).Select(subgroup => (table.ToGroup(subgroup.Generators), subgroup.Members.Select(member => table.Permutations[member]).ToHashSet()));
     }
 
     /// <summary>A random group of degree 6 to 8 with its members.</summary>
