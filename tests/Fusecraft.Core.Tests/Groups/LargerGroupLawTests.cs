@@ -130,6 +130,38 @@ public class LargerGroupLawTests
             && stabilizer.Order * group.OrbitSizeOfColouring(colours) == group.Order;
     }
 
+    // Above 256 points permutations are stored in another width; a group whose points are spread out that far, in the same order, is the same to every question.
+    [Property(MaxTest = 60)]
+    public void A_group_spread_over_300_points_answers_as_before(ulong seed)
+    {
+        var (group, _, random) = QueriesOracle.RandomGroup(seed);
+        int[] places = [.. Enumerable.Range(0, group.Degree).Select(i => (37 * i) + 2)];
+        var spread = Permutation.FromImages([.. places, .. Enumerable.Range(0, 300).Except(places)]);
+        var wide = Spread(group, spread);
+        var (a, b) = (group.RandomElement(random), random.NextPermutation(group.Degree));
+        Assert.Equal(group.Order, wide.Order);
+        Assert.Equal(group.Rank(a), wide.Rank(a.ConjugateBy(spread)));
+        Assert.Equal(a.ConjugateBy(spread), wide.Unrank(group.Rank(a)));
+        Assert.Equal(group.Contains(b), wide.Contains(b.ConjugateBy(spread)));
+        Assert.Equal(group.LeastOfCoset(b).ConjugateBy(spread), wide.LeastOfCoset(b.ConjugateBy(spread)));
+        Assert.Equal(group.FindExponent(), wide.FindExponent());
+        Assert.Equal(group.AbelianInvariants().ToArray(), wide.AbelianInvariants());
+        Assert.Equal(group.BlockSystems(0).Select(system => system.PartSize), wide.BlockSystems(places[0]).Select(system => system.PartSize));
+        RequireSame(group.Centre(), wide.Centre());
+        RequireSame(group.DerivedSubgroup(), wide.DerivedSubgroup());
+        RequireSame(group.NormalClosure(a), wide.NormalClosure(a.ConjugateBy(spread)));
+        RequireSame(group.Centralizer(b), wide.Centralizer(b.ConjugateBy(spread)));
+        RequireSame(group.SetwiseStabilizer([0, 3]), wide.SetwiseStabilizer([places[0], places[3]]));
+        RequireSame(group.PointwiseStabilizer(1, 2), wide.PointwiseStabilizer(places[1], places[2]));
+        var other = PermutationGroup.Generate([a, b], group.Degree);
+        RequireSame(group.Intersection(other), wide.Intersection(Spread(other, spread)));
+        Assert.Equal(group.FindConjugator(a, a.ConjugateBy(b)) is null, wide.FindConjugator(a.ConjugateBy(spread), a.ConjugateBy(b).ConjugateBy(spread)) is null);
+
+        void RequireSame(PermutationGroup narrow, PermutationGroup found) => Assert.True(Spread(narrow, spread).SameGroupAs(found));
+    }
+
+    private static PermutationGroup Spread(PermutationGroup group, Permutation spread) => PermutationGroup.Generate(group.Generators.Select(p => p.ConjugateBy(spread)), 300);
+
     private static (PermutationGroup Group, SeededRandom Random) Group(ulong seed, int largestDegree = 40)
     {
         var random = new SeededRandom(seed);
