@@ -13,6 +13,9 @@ internal sealed class ExponentSearch
     private const int Samples = 100;
     private const int CentralizersTried = 20;
 
+    // So few members are listed faster than their structure is looked at.
+    private const int ListedAtOnce = 2000;
+
     private readonly int _prime;
     private readonly long _listingLimit;
     private readonly CancellationToken _cancellation;
@@ -37,6 +40,11 @@ internal sealed class ExponentSearch
         if (group.IsAbelian)
         {
             return group.Generators.Max(PartOfOrder);
+        }
+
+        if (group.Order <= Math.Min(ListedAtOnce, _listingLimit))
+        {
+            return List(group, 1, BigInteger.Pow(_prime, valuation));
         }
 
         // A power of an element is the identity when it is on every orbit, and every element of the action on an orbit comes from a member.
