@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using System.Globalization;
 using System.Numerics;
+using Fusecraft.Permutations;
 
 namespace Fusecraft.Groups;
 
@@ -131,25 +132,58 @@ public sealed class ActionPortrait
         return (transitivity, lists == Group.Order);
     }
 
+    // Small groups are listed. For others, members drawn at random give a divisor of the exponent, and the structure a multiple; where they meet the exponent is proven.
     private BigInteger? FindExponent()
     {
-        const int MostMembers = 100_000;
+        const int Draws = 1000;
         if (IsGiant)
         {
             return Giants.Exponent(Degree, IsAlternating);
         }
 
-        if (Group.Order > MostMembers)
+        var bound = ExponentBound();
+        var random = new SeededRandom(0);
+        var members = Group.Order <= Draws ? Group.Elements() : Enumerable.Range(0, Draws).Select(_ => Group.RandomElement(random));
+        var divisor = BigInteger.One;
+        foreach (var member in members)
         {
-            return null;
+            divisor = LeastCommonMultiple(divisor, member.CycleType.Order);
+            if (divisor == bound)
+            {
+                return divisor;
+            }
         }
 
-        var exponent = BigInteger.One;
-        foreach (var type in Group.CycleTypeCounts().Keys)
+        if (Group.Order <= Draws)
         {
-            exponent = exponent / BigInteger.GreatestCommonDivisor(exponent, type.Order) * type.Order;
+            return divisor;
         }
 
-        return exponent;
+        const int MostListed = 100_000;
+        return Group.Order > MostListed ? null : Group.CycleTypeCounts().Keys.Aggregate(divisor, (exponent, type) => LeastCommonMultiple(exponent, type.Order));
     }
+
+    // A multiple of the exponent: prime powers that are cycle lengths and divide the order; and what the kernel and the image of the action on parts can have together.
+    private BigInteger ExponentBound()
+    {
+        var bound = BigInteger.One;
+        foreach (var (prime, most) in Order.PrimePowers)
+        {
+            for (var (power, exponent) = (prime, 1); power <= Degree && exponent <= most; power *= prime, exponent++)
+            {
+                bound *= prime;
+            }
+        }
+
+        foreach (var system in MinimalBlockSystems.Take(1))
+        {
+            bound = BigInteger.GreatestCommonDivisor(bound, Known(system.ActionInPart) * Known(system.ActionOnParts));
+        }
+
+        return bound;
+
+        static BigInteger Known(ActionPortrait action) => action.Exponent ?? action.ExponentBound();
+    }
+
+    private static BigInteger LeastCommonMultiple(BigInteger a, BigInteger b) => a / BigInteger.GreatestCommonDivisor(a, b) * b;
 }

@@ -65,7 +65,7 @@ public sealed class GroupPortrait
     /// <summary>The prime powers, ascending, whose cyclic groups multiply to the quotient by the derived subgroup.</summary>
     public ImmutableArray<int> AbelianInvariants { get; }
 
-    /// <summary>The least common multiple of the orders of all members; null where that would take long to find: where the action on some orbit has more than 100,000 members and is neither symmetric nor alternating.</summary>
+    /// <summary>The least common multiple of the orders of all members; null where it is not cheap to prove, which may be where the group acts on some orbit with more than 100,000 members, neither as the symmetric nor as the alternating group.</summary>
     public BigInteger? Exponent { get; }
 
     /// <summary>
@@ -77,7 +77,7 @@ public sealed class GroupPortrait
     public override string ToString()
     {
         var text = new StringBuilder();
-        text.Append(CultureInfo.InvariantCulture, $"order {Group.Order}{(Order.PrimePowers is [] or [(_, 1)] ? "" : $" = {Order}")}, {MovedPoints} points moved, {(Orbits.Length == 1 ? "1 orbit" : $"{Orbits.Length} orbits")}\n");
+        text.Append(CultureInfo.InvariantCulture, $"order {OrderText()}, {MovedPoints} points moved, {(Orbits.Length == 1 ? "1 orbit" : $"{Orbits.Length} orbits")}\n");
         text.Append(CultureInfo.InvariantCulture, $"{Kind()}{(Exponent is { } exponent ? $", exponent {exponent}" : "")}\n");
         text.Append(CultureInfo.InvariantCulture, $"composition factors: {(CompositionFactors.IsEmpty ? "none" : string.Join(", ", CompositionFactors))}");
         for (var i = 0; i < Orbits.Length; i++)
@@ -86,6 +86,13 @@ public sealed class GroupPortrait
         }
 
         return text.ToString();
+    }
+
+    // In decimals while they fit on a line, and as prime powers.
+    private string OrderText()
+    {
+        const int MostBits = 260;
+        return Group.Order.GetBitLength() > MostBits ? $"{Order}" : Order.PrimePowers is [] or [(_, 1)] ? $"{Group.Order}" : $"{Group.Order} = {Order}";
     }
 
     private string Kind()
