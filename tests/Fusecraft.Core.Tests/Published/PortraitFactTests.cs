@@ -110,7 +110,7 @@ public class PortraitFactTests
         Assert.True(action.IsAffine);
     }
 
-    // Linear groups on prime power degree that have no translations: the projective line over 7 and 8 elements, the 15 points over 2 (not a prime power), PSL(3,3) on 13, PSL(3,5) on 31.
+    // Linear groups on prime power degree that have no translations: the projective lines over 7, 8 and 31 elements, the planes over 3 and 5 (13 and 31 points).
     [Fact]
     public void Projective_groups_are_not_affine() => Assert.All(
         [KnownGroups.ProjectiveSpecial(2, 7), KnownGroups.ProjectiveGeneral(2, 7), KnownGroups.ProjectiveSpecial(2, 8), KnownGroups.ProjectiveSpecial(3, 3), KnownGroups.ProjectiveSpecial(3, 5), KnownGroups.ProjectiveSpecial(2, 31)],

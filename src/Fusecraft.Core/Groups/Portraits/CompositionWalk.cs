@@ -125,7 +125,7 @@ internal sealed class CompositionWalk
         var degree = FactoredInteger.FromFactors(group.Degree);
         var half = order == degree * degree ? SimpleGroupNames.OfOrder(degree) : [];
         var names = SimpleGroupNames.OfOrder(order);
-        if ((IsFifthOrHigherPower(group.Degree) && (group.Order % 1024).IsZero) || (!half.IsEmpty && (!names.IsEmpty || group.Degree == SimpleGroupNames.AmbiguousOrder)))
+        if (MayHaveManyFactors(group.Degree, group.Order) || (!half.IsEmpty && (!names.IsEmpty || group.Degree == SimpleGroupNames.AmbiguousOrder)))
         {
             TakeUnrecognised(group);
         }
@@ -144,6 +144,9 @@ internal sealed class CompositionWalk
     // Alt(8) has elements of orders 6 and 15, PSL(3,4) none of order above 7 and none of order 6 (Atlas, from memory).
     private static ImmutableArray<string> NamesOfAmbiguous(PermutationGroup group) =>
         group.Elements().Any(member => member.CycleType.Order is var order && (order == 6 || order == 15)) ? ["Alt(8)", "PSL(4,2)"] : ["PSL(3,4)"];
+
+    /// <summary>False where degree or order tell that a perfect primitive group that is not affine has at most two simple factors in its socle.</summary>
+    internal static bool MayHaveManyFactors(int degree, BigInteger order) => (order % 1024).IsZero && IsFifthOrHigherPower(degree);
 
     private static bool IsFifthOrHigherPower(int n)
     {

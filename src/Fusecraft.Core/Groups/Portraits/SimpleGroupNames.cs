@@ -16,12 +16,10 @@ internal static class SimpleGroupNames
 {
     public const int AmbiguousOrder = 20_160;
 
-    private static readonly (string Name, string Order)[] _sporadic =
-    [
+    private static readonly ImmutableArray<(string Name, FactoredInteger Order)> _sporadic = Parse(
         ("M11", "2^4·3^2·5·11"), ("M12", "2^6·3^3·5·11"), ("M22", "2^7·3^2·5·7·11"), ("M23", "2^7·3^2·5·7·11·23"), ("M24", "2^10·3^3·5·7·11·23"), ("J1", "2^3·3·5·7·11·19"), ("J2", "2^7·3^3·5^2·7"),
         ("J3", "2^7·3^5·5·17·19"), ("HS", "2^9·3^2·5^3·7·11"), ("McL", "2^7·3^6·5^3·7·11"), ("He", "2^10·3^3·5^2·7^3·17"), ("Ru", "2^14·3^3·5^3·7·13·29"), ("Suz", "2^13·3^7·5^2·7·11·13"),
-        ("Co3", "2^10·3^7·5^3·7·11·23"), ("Co2", "2^18·3^6·5^3·7·11·23"), ("Fi22", "2^17·3^9·5^2·7·11·13"), ("Fi23", "2^18·3^13·5^2·7·11·13·17·23"), ("Tits group", "2^11·3^3·5^2·13"),
-    ];
+        ("Co3", "2^10·3^7·5^3·7·11·23"), ("Co2", "2^18·3^6·5^3·7·11·23"), ("Fi22", "2^17·3^9·5^2·7·11·13"), ("Fi23", "2^18·3^13·5^2·7·11·13·17·23"), ("Tits group", "2^11·3^3·5^2·13"));
 
     /// <summary>All names, alternating groups first; none where no simple group of the families here has the order.</summary>
     public static ImmutableArray<string> OfOrder(FactoredInteger factored)
@@ -40,7 +38,7 @@ internal static class SimpleGroupNames
 
         foreach (var (name, sporadicOrder) in _sporadic)
         {
-            if (FactoredInteger.Parse(sporadicOrder) == factored)
+            if (sporadicOrder == factored)
             {
                 names.Add(name);
             }
@@ -58,6 +56,17 @@ internal static class SimpleGroupNames
         ofLieType.Sort();
         names.AddRange(ofLieType.Select(candidate => candidate.Name));
         return names.DrainToImmutable();
+    }
+
+    private static ImmutableArray<(string Name, FactoredInteger Order)> Parse(params ReadOnlySpan<(string Name, string Order)> groups)
+    {
+        var parsed = ImmutableArray.CreateBuilder<(string Name, FactoredInteger Order)>(groups.Length);
+        foreach (var (name, order) in groups)
+        {
+            parsed.Add((name, FactoredInteger.Parse(order)));
+        }
+
+        return parsed.DrainToImmutable();
     }
 
     // The groups over fields of the given characteristic whose order may be divisible by exactly this power of it. Left out are the few that are not simple.
