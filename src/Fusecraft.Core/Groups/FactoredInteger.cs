@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using System.Diagnostics;
 using System.Globalization;
 using System.Numerics;
 
@@ -83,6 +84,23 @@ public readonly partial struct FactoredInteger : IEquatable<FactoredInteger>, IM
         return new FactoredInteger(exponents);
 
         void Count(int prime) => exponents[prime] = exponents.GetValueOrDefault(prime) + 1;
+    }
+
+    /// <summary>A positive integer with no prime factor above a bound, by trial division.</summary>
+    internal static FactoredInteger FromSmooth(BigInteger value, int largestPrime)
+    {
+        var exponents = new SortedDictionary<int, int>();
+        for (var prime = 2; prime <= largestPrime && !value.IsOne; prime++)
+        {
+            for (var quotient = BigInteger.DivRem(value, prime, out var rest); rest.IsZero; quotient = BigInteger.DivRem(value, prime, out rest))
+            {
+                value = quotient;
+                exponents[prime] = exponents.GetValueOrDefault(prime) + 1;
+            }
+        }
+
+        Debug.Assert(value.IsOne, "Some prime factor is above the bound.");
+        return new FactoredInteger(exponents);
     }
 
     /// <inheritdoc/>

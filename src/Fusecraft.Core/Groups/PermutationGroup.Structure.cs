@@ -72,6 +72,9 @@ public sealed partial class PermutationGroup
             {
                 closure.Add(candidate);
                 group = Generate(closure, Degree);
+
+                // A closure that reaches the order of this group needs no further proof.
+                group = FromChain(group.Generators, StabilizerChain.Build(group, new ChainOptions { OrderBound = Order }));
             }
         }
     }
