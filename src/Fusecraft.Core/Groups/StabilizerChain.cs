@@ -78,11 +78,6 @@ public sealed class StabilizerChain
             return new StabilizerChain(giant, ChainProof.Proven, isAscending);
         }
 
-        if (options.OrderBound is null && options.Verify && group.Degree >= FewestPointsForBound)
-        {
-            options = options with { OrderBound = SubdirectBound.Of(group, cancellationToken) };
-        }
-
         return group.Degree <= 256
             ? Build<byte>(group, prefix, options, cancellationToken)
             : Build<ushort>(group, prefix, options, cancellationToken);
@@ -205,20 +200,9 @@ public sealed class StabilizerChain
     private static StabilizerChain Build<T>(PermutationGroup group, int[] prefix, ChainOptions options, CancellationToken cancellation)
         where T : unmanaged, IBinaryInteger<T>
     {
-        if (options.OrderBound is not null)
+        if (BuildToBound<T>(group, prefix, options, cancellation) is { } proven)
         {
-            var quick = new ChainBuilder<T>(group.Degree, prefix, options.OrderBound);
-            var row = new T[quick.Stride];
-            foreach (var generator in group.Generators)
-            {
-                generator.CopyLanes<T>(row);
-                quick.AddUnsettled(row);
-            }
-
-            if (quick.TryReachBound(cancellation))
-            {
-                return quick.ToChain();
-            }
+            return proven;
         }
 
         var builder = new ChainBuilder<T>(group.Degree, prefix, options.OrderBound);
@@ -248,6 +232,29 @@ public sealed class StabilizerChain
         }
 
         return builder.ToChain(options.ErrorBits);
+    }
+
+    // The chain as soon as it meets the bound given, or the one of its orbits; null where it meets neither.
+    private static StabilizerChain? BuildToBound<T>(PermutationGroup group, int[] prefix, ChainOptions options, CancellationToken cancellation)
+        where T : unmanaged, IBinaryInteger<T>
+    {
+        var findsBound = options.Verify && group.Degree >= FewestPointsForBound;
+        if (options.OrderBound is null && !findsBound)
+        {
+            return null;
+        }
+
+        var builder = new ChainBuilder<T>(group.Degree, prefix);
+        var lanes = new T[builder.Stride];
+        foreach (var generator in group.Generators)
+        {
+            generator.CopyLanes<T>(lanes);
+            builder.AddUnsettled(lanes);
+        }
+
+        return (options.OrderBound is { } given && builder.TryReachBound(given, cancellation)) || (findsBound && builder.TryReachBound(SubdirectBound.Of(group, cancellation), cancellation))
+            ? builder.ToChain()
+            : null;
     }
 
     private void RequireLevel(int level)
