@@ -180,6 +180,22 @@ internal sealed class ChainBuilder<T>
         return false;
     }
 
+    /// <summary>Some members that fix the first base point, after a few random elements where there are none yet.</summary>
+    public Permutation[] SecondLevelGenerators()
+    {
+        for (var draw = 0; draw < QuietForBound && _tables.Count > 0 && (_tables.Count < 2 || _tables[1].Generators.Count < 2); draw++)
+        {
+            _tables[0].Walk.Next(_random).CopyTo(_sifted);
+            if (SiftInOrder() is > 0 and var level)
+            {
+                _sifted.CopyTo(_product);
+                Insert(level, _product);
+            }
+        }
+
+        return _tables.Count < 2 ? [] : [.. _tables.OwnGenerators(1)];
+    }
+
     // Sifts and gives the level where the element fell out, as one does that moves a point which comes before the level's base point; -1 where it was held.
     private int SiftInOrder()
     {

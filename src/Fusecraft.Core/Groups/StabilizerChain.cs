@@ -252,9 +252,12 @@ public sealed class StabilizerChain
             builder.AddUnsettled(lanes);
         }
 
-        return (options.OrderBound is { } given && builder.TryReachBound(given, cancellation)) || (findsBound && builder.TryReachBound(SubdirectBound.Of(group, cancellation), cancellation))
-            ? builder.ToChain()
-            : null;
+        if (options.OrderBound is { } given && builder.TryReachBound(given, cancellation))
+        {
+            return builder.ToChain();
+        }
+
+        return findsBound && builder.TryReachBound(SubdirectBound.Of(group, builder.SecondLevelGenerators(), cancellation), cancellation) ? builder.ToChain() : null;
     }
 
     private void RequireLevel(int level)

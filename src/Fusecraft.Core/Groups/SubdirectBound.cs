@@ -18,7 +18,10 @@ internal static class SubdirectBound
     /// <summary>Larger orbits are taken without block systems, which would cost more than they save.</summary>
     private const int LargestOrbit = 512;
 
-    public static BigInteger Of(PermutationGroup group, CancellationToken cancellation)
+    /// <param name="group">Any group.</param>
+    /// <param name="fixing">Some members that fix the first point moved; they save work.</param>
+    /// <param name="cancellation">Ends the work early.</param>
+    public static BigInteger Of(PermutationGroup group, ReadOnlySpan<Permutation> fixing, CancellationToken cancellation)
     {
         var parts = new List<OrbitParts>();
         var kept = new List<int[][]>();
@@ -26,11 +29,11 @@ internal static class SubdirectBound
         foreach (var orbit in group.MovedOrbits)
         {
             cancellation.ThrowIfCancellationRequested();
-            var generators = ActionOn(group, orbit, placeOf);
+            var generators = ActionOn(group.Generators.AsSpan(), orbit, placeOf);
             if (!kept.Exists(other => AreEquivalent(other, generators)))
             {
                 kept.Add(generators);
-                parts.Add(BestParts(generators));
+                parts.Add(BestParts(generators, parts.Count == 0 ? ActionOn(fixing, orbit, placeOf) : []));
             }
         }
 
@@ -43,20 +46,20 @@ internal static class SubdirectBound
         return order * ImageOrder(group.Generators.Length, parts);
     }
 
-    private static int[][] ActionOn(PermutationGroup group, ImmutableArray<int> orbit, int[] placeOf)
+    private static int[][] ActionOn(ReadOnlySpan<Permutation> members, ImmutableArray<int> orbit, int[] placeOf)
     {
         for (var place = 0; place < orbit.Length; place++)
         {
             placeOf[orbit[place]] = place;
         }
 
-        var generators = new int[group.Generators.Length][];
+        var generators = new int[members.Length][];
         for (var i = 0; i < generators.Length; i++)
         {
             generators[i] = new int[orbit.Length];
             for (var place = 0; place < orbit.Length; place++)
             {
-                generators[i][place] = placeOf[group.Generators[i][orbit[place]]];
+                generators[i][place] = placeOf[members[i][orbit[place]]];
             }
         }
 
@@ -110,8 +113,8 @@ internal static class SubdirectBound
         return true;
     }
 
-    // The division that gives the least bound.
-    private static OrbitParts BestParts(int[][] generators)
+    // The division that gives the least bound. What fixes point 0 carries the division that unites it with a point to itself, so it unites it with the images of that point as well.
+    private static OrbitParts BestParts(int[][] generators, int[][] fixing)
     {
         var size = generators[0].Length;
         var best = OrbitParts.Points(generators, size);
@@ -128,6 +131,7 @@ internal static class SubdirectBound
                 continue;
             }
 
+            Settle(point);
             var parent = AtkinsonBlocks.Join(generators, size, [(0, point)], out var unions);
             var parts = size - unions;
             if (parts == 1)
@@ -147,6 +151,23 @@ internal static class SubdirectBound
         }
 
         return best;
+
+        void Settle(int point)
+        {
+            var open = new Stack<int>([point]);
+            isSettled[point] = true;
+            while (open.TryPop(out var next))
+            {
+                foreach (var member in fixing)
+                {
+                    if (!isSettled[member[next]])
+                    {
+                        isSettled[member[next]] = true;
+                        open.Push(member[next]);
+                    }
+                }
+            }
+        }
     }
 
     private static int[] NumberParts(int[] parent)
