@@ -15,6 +15,9 @@ internal sealed class ShapeBoard
     private readonly Dictionary<Slot, int> _slotOf = [];
     private readonly HashSet<(int, int)>? _adjacent;
     private readonly StepMoves[] _moves;
+    private readonly Lazy<StepMasks?> _masks;
+    private readonly Lazy<ByteTables?> _byteTables;
+    private volatile ShapeProduct? _product;
 
     public ShapeBoard(Mechanism mechanism)
     {
@@ -51,9 +54,18 @@ internal sealed class ShapeBoard
         {
             var step = mechanism.Steps[s];
             var targets = _slots.Select(slot => After(slot, step.Permutation, pieceMaps[s], carries[s]) is { } next ? _slotOf[next] : -1).ToArray();
-            _moves[s] = new StepMoves(Words, targets, step.Terms, mark => _slotOf.TryGetValue(mark, out var slot) ? slot : null);
+            _moves[s] = new StepMoves(mechanism, Words, targets, step.Terms, mark => _slotOf.TryGetValue(mark, out var slot) ? slot : null);
         }
+
+        _masks = new Lazy<StepMasks?>(() => StepMasks.Of(mechanism, this));
+        _byteTables = new Lazy<ByteTables?>(() => Words == 1 && Masks is { } masks ? new ByteTables(this, masks) : null);
     }
+
+    /// <summary>The steps that are free in a shape as the bits of one word; null where there are too many, or conditions in code.</summary>
+    public StepMasks? Masks => _masks.Value;
+
+    /// <summary>Moves by table look-up, for keys of one word; null where there is no such thing. Made at the first call, which takes some tens of microseconds.</summary>
+    public ByteTables? ByteTables => _byteTables.Value;
 
     /// <summary>The number of 64-bit words of a shape's key.</summary>
     public int Words { get; }
@@ -63,6 +75,17 @@ internal sealed class ShapeBoard
     public ulong[] HomeKey { get; }
 
     public ReadOnlySpan<StepMoves> Moves => _moves;
+
+    /// <summary>The tracks of this board, kept once made; null where they would have more than so many positions, or the steps do not fit them.</summary>
+    public ShapeProduct? ProductWithin(int maxPositions)
+    {
+        if (_product is { } product)
+        {
+            return product.PositionCount <= maxPositions ? product : null;
+        }
+
+        return Masks is { } masks ? _product = ShapeProduct.Of(this, masks, maxPositions) : null;
+    }
 
     public StepMoves Of(Step step)
     {
