@@ -24,9 +24,6 @@ internal abstract class ExploredShapes
     /// <summary>The number of words of a shape's key.</summary>
     public int Words => Mechanism.Board.Words;
 
-    /// <summary>The number of words of a candidate's record.</summary>
-    public abstract int RecordWords { get; }
-
     protected Column<int> Parents { get; }
 
     protected Column<ushort> Steps { get; }
@@ -72,7 +69,7 @@ internal abstract class ExploredShapes
     public abstract bool TryAddAfter(int parent, int step);
 
     /// <summary>Makes ready for look-ups when no more shapes are to come.</summary>
-    public abstract void Finish();
+    public abstract void Finish(int threads);
 
     /// <summary>The least number of shapes more than which do not fit so many bytes.</summary>
     public int CountWithin(long bytes)

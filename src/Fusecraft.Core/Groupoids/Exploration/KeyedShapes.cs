@@ -34,8 +34,6 @@ internal sealed partial class KeyedShapes<TWidth> : ExploredShapes
         SetOrigin(0, -1, 0);
     }
 
-    public override int RecordWords => TWidth.Words(Words);
-
     // While the table grows the old one is still there.
     public override long BytesFor(long count) =>
         (count * ((8L * Words) + sizeof(int) + sizeof(ushort))) + (12L * (long)Math.Max(FirstTableLength, BitOperations.RoundUpToPowerOf2((ulong)(count * 8 / 5))));
@@ -97,20 +95,28 @@ internal sealed partial class KeyedShapes<TWidth> : ExploredShapes
 
     public override bool TryAddAfter(int parent, int step)
     {
-        if (Target(parent, step) >= 0 || !_moves[step].IsFree<TWidth>(_keys.Entry(parent)))
+        if (!_moves[step].IsFree<TWidth>(_keys.Entry(parent)))
         {
             return false;
         }
 
-        Span<ulong> next = new ulong[Words];
+        Span<ulong> next = stackalloc ulong[8];
+        next = Words <= next.Length ? next[..Words] : new ulong[Words];
         _moves[step].Move<TWidth>(_keys.Entry(parent), next);
+        ref var key = ref MemoryMarshal.GetReference(next);
+        var hash = Hash(ref key);
+        if (Find(hash, ref key) >= 0)
+        {
+            return false;
+        }
+
         EnsureCapacity(Count + 1);
         SetOrigin(Count, parent, step);
-        Insert(Hash(ref MemoryMarshal.GetReference(next)), ref MemoryMarshal.GetReference(next));
+        Insert(hash, ref key);
         return true;
     }
 
-    public override void Finish()
+    public override void Finish(int threads)
     {
         _keys.Trim(Count);
         Parents.Trim(Count);

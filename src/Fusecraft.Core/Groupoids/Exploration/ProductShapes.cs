@@ -48,8 +48,6 @@ internal sealed class ProductShapes<T> : ExploredShapes
         }
     }
 
-    public override int RecordWords => 1;
-
     public override long BytesFor(long count) => BytesFor(Mechanism, _product, count);
 
     /// <summary>The bytes that so many shapes take, with the bits and the tables.</summary>
@@ -141,7 +139,7 @@ internal sealed class ProductShapes<T> : ExploredShapes
         }
     }
 
-    public override void Finish()
+    public override void Finish(int threads)
     {
         _codes.Trim(Count);
         Parents.Trim(Count);
@@ -159,7 +157,20 @@ internal sealed class ProductShapes<T> : ExploredShapes
         }
 
         _numbers = HugePages.Allocate<int>(Count);
-        for (var shape = 0; shape < Count; shape++)
+        const int Piece = 1 << 16;
+        if (threads == 1 || Count <= Piece)
+        {
+            Number(0, Count);
+        }
+        else
+        {
+            Parallel.For(0, (Count + Piece - 1) / Piece, new ParallelOptions { MaxDegreeOfParallelism = threads }, i => Number(i * Piece, (int)Math.Min(Count, (i + 1L) * Piece)));
+        }
+    }
+
+    private void Number(int first, int end)
+    {
+        for (var shape = first; shape < end; shape++)
         {
             _numbers[PlaceOf(ulong.CreateTruncating(_codes.At(shape)))] = shape;
         }

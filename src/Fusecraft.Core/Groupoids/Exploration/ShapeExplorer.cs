@@ -67,9 +67,39 @@ internal sealed class ShapeExplorer
         Shapes = New(_mechanism, first);
         SetLimit();
         Search();
-        LevelStarts.Add(Shapes.Count);
-        _chunks.Clear();
-        Shapes.Finish();
+        Finish();
+    }
+
+    /// <summary>Takes what an earlier search found from a file instead of searching.</summary>
+    /// <exception cref="InvalidDataException">The file is damaged.</exception>
+    public void Run(GraphFileReader file)
+    {
+        Shapes = New(_mechanism, file.First);
+        (IsComplete, FreeTurns, DeadEnds, StuckShapes) = (file.IsComplete, file.FreeTurns, file.DeadEnds, file.StuckShapes);
+        var levelEnd = 1;
+        for (var parent = 0; parent < file.ShapeCount; parent++)
+        {
+            if (parent == Shapes.Count)
+            {
+                throw GraphFileReader.Damaged();
+            }
+
+            if (parent == levelEnd)
+            {
+                LevelStarts.Add(parent);
+                levelEnd = Shapes.Count;
+            }
+
+            if (Shapes.Count >= _nextProductTry)
+            {
+                TryProduct();
+            }
+
+            file.AddShapesFoundFrom(parent, Shapes);
+        }
+
+        file.End(Shapes.Count);
+        Finish();
     }
 
     /// <summary>One shape, held by its key.</summary>
@@ -93,6 +123,13 @@ internal sealed class ShapeExplorer
 
         steps.Reverse();
         return [.. steps];
+    }
+
+    private void Finish()
+    {
+        LevelStarts.Add(Shapes.Count);
+        _chunks.Clear();
+        Shapes.Finish(_options.DegreeOfParallelism);
     }
 
     private void Search()

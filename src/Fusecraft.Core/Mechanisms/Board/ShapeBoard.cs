@@ -8,7 +8,7 @@ namespace Fusecraft.Mechanisms;
 /// The one representation all constraints reduce to. A slot is a place for one token: a bond between two pieces, or a mark on a site. A shape is a bitset over the slots that home's
 /// tokens can ever reach when guards are ignored and nothing is torn.
 /// </summary>
-internal sealed class ShapeBoard
+internal sealed partial class ShapeBoard
 {
     private readonly Mechanism _mechanism;
     private readonly List<Slot> _slots = [];
@@ -17,7 +17,6 @@ internal sealed class ShapeBoard
     private readonly StepMoves[] _moves;
     private readonly Lazy<StepMasks?> _masks;
     private readonly Lazy<ByteTables?> _byteTables;
-    private volatile ShapeProduct? _product;
 
     public ShapeBoard(Mechanism mechanism)
     {
@@ -61,12 +60,6 @@ internal sealed class ShapeBoard
         _byteTables = new Lazy<ByteTables?>(() => Words == 1 && Masks is { } masks ? new ByteTables(this, masks) : null);
     }
 
-    /// <summary>The steps that are free in a shape as the bits of one word; null where there are too many, or conditions in code.</summary>
-    public StepMasks? Masks => _masks.Value;
-
-    /// <summary>Moves by table look-up, for keys of one word; null where there is no such thing. Made at the first call, which takes some tens of microseconds.</summary>
-    public ByteTables? ByteTables => _byteTables.Value;
-
     /// <summary>The number of 64-bit words of a shape's key.</summary>
     public int Words { get; }
 
@@ -75,17 +68,6 @@ internal sealed class ShapeBoard
     public ulong[] HomeKey { get; }
 
     public ReadOnlySpan<StepMoves> Moves => _moves;
-
-    /// <summary>The tracks of this board, kept once made; null where they would have more than so many positions, or the steps do not fit them.</summary>
-    public ShapeProduct? ProductWithin(int maxPositions)
-    {
-        if (_product is { } product)
-        {
-            return product.PositionCount <= maxPositions ? product : null;
-        }
-
-        return Masks is { } masks ? _product = ShapeProduct.Of(this, masks, maxPositions) : null;
-    }
 
     public StepMoves Of(Step step)
     {
