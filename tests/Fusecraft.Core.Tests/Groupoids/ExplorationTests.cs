@@ -7,7 +7,7 @@ namespace Fusecraft.Tests.Groupoids;
 /// <summary>Exploration finds and numbers exactly what a plain search does, on any number of threads and however the shapes are held.</summary>
 public class ExplorationTests
 {
-    private static readonly Lazy<Mechanism> Canal = new(() => Make.Cube(5, "", "1,1,2 1,1,3", "5,2,1 5,3,1", "5,4,1 5,5,1", "2,1,5 3,1,5"));
+    private static readonly Lazy<Mechanism> Canal = new(() => Make.Cube(5, "", "1,1,2 1,1,3", "5,2,1 5,3,1", "5,4,1 5,5,1", "2,1,5 3,1,5", "4,1,1 5,1,1"));
 
     // 144 slots: wider than two words, and tracks of three kinds.
     private static readonly Lazy<Mechanism> Wide = new(() => Make.Cube(5, "", "1,1,2 1,1,3", "5,4,1 5,5,1", "5,3,3 5,3,2", "1,3,3 1,2,3"));
@@ -51,14 +51,6 @@ public class ExplorationTests
         }
 
         IsAs(new PlainExplorer(builder.Build()), ExploreAsProduct(builder.Build(), 3, 66 * 66 * 66));
-    }
-
-    [Fact]
-    public void One_track_is_as_good_as_keys()
-    {
-        var mechanism = Make.Cube(5, "", "1,1,2 1,1,3", "5,2,1 5,3,1", "2,1,5 3,1,5", "5,5,2 5,5,3");
-        var plain = new PlainExplorer(mechanism);
-        IsAs(plain, ExploreAsProduct(mechanism, 1, plain.Count));
     }
 
     [Fact]

@@ -48,8 +48,9 @@ public class CodedGuardTests
             Assert.Equal(Distance(at) != 3, at.IsFree(mechanism.FindTurn("A")!.Backward!));
         }
 
-        Assert.Equal(15, groupoid.ShapeCount);
-        var opposite = Enumerable.Range(0, 15).Select(groupoid.ShapeAt).First(shape => Distance(shape) == 3);
+        // Of the 15 pairs of sites only 3 and 6 are never reached: opposite, and B leaves them alone.
+        Assert.Equal(14, groupoid.ShapeCount);
+        var opposite = Enumerable.Range(0, 14).Select(groupoid.ShapeAt).First(shape => Distance(shape) == 3);
         Assert.Equal("its condition in code does not hold", opposite.WhyBarred(mechanism.FindTurn("A")!.Forward)!.ToString());
         Assert.Single(groupoid.Regions);
     }

@@ -72,7 +72,7 @@ internal sealed class PlainExplorer
                 {
                     IsComplete = false;
                     _store.RemoveLast<ManyWords>();
-                    LevelStarts.Add(Count);
+                    LevelStarts.AddRange(Count > levelEnd ? [levelEnd, Count] : [Count]);
                     return;
                 }
 

@@ -10,7 +10,7 @@ namespace Fusecraft.Groupoids;
 /// it often fits the caches.
 /// </summary>
 /// <typeparam name="T">The integer that holds the numbers of the product.</typeparam>
-internal sealed class ProductShapes<T> : ExploredShapes
+internal sealed partial class ProductShapes<T> : ExploredShapes
     where T : unmanaged, IBinaryInteger<T>
 {
     /// <summary>So many words of bits share a count of those before.</summary>
@@ -126,19 +126,6 @@ internal sealed class ProductShapes<T> : ExploredShapes
         return true;
     }
 
-    public override void Generate(int first, int end, Candidates candidates)
-    {
-        candidates.Reset(first, (end - first) * _steps, 1);
-        if (_parts.Length == 2)
-        {
-            GenerateFromTwo(first, end, candidates);
-        }
-        else
-        {
-            GenerateFromAny(first, end, candidates);
-        }
-    }
-
     public override void Finish(int threads)
     {
         _codes.Trim(Count);
@@ -218,73 +205,5 @@ internal sealed class ProductShapes<T> : ExploredShapes
         }
 
         return parts;
-    }
-
-    private void GenerateFromTwo(int first, int end, Candidates candidates)
-    {
-        var radix = _product.Radices[0];
-        ref var found = ref MemoryMarshal.GetArrayDataReference(_found);
-        ref var records = ref MemoryMarshal.GetArrayDataReference(candidates.Records);
-        ref var origins = ref MemoryMarshal.GetArrayDataReference(candidates.Origins);
-        var masks = _masks;
-        var count = 0UL;
-        for (var shape = first; shape < end; shape++)
-        {
-            var (one, other) = Math.DivRem(ulong.CreateTruncating(_codes.At(shape)), radix);
-            var free = masks.StepsOf(_terms[0][one] & _terms[1][other]);
-            candidates.Note(masks.FreeForwardSteps(free), masks.FreeTurns(free));
-            candidates.Clash = candidates.Clash < 0 && masks.Clash(free) ? shape : candidates.Clash;
-            ref var ones = ref _parts[0][one * (uint)_steps];
-            ref var others = ref _parts[1][other * (uint)_steps];
-            var origin = (uint)(shape - first) << 16;
-            for (; free != 0; free &= free - 1)
-            {
-                // Written in any case, and kept if it is new: cheaper than a jump that nothing foretells.
-                var step = (ulong)BitOperations.TrailingZeroCount(free);
-                var code = ulong.CreateTruncating(ones.At(step) + others.At(step));
-                records.At(count) = code;
-                origins.At(count) = origin | (uint)step;
-                count += ~(found.At(code >> 6) >> (int)code) & 1;
-            }
-        }
-
-        candidates.Count = (int)count;
-    }
-
-    private void GenerateFromAny(int first, int end, Candidates candidates)
-    {
-        var count = 0;
-        Span<int> rows = stackalloc int[_parts.Length];
-        for (var shape = first; shape < end; shape++)
-        {
-            var code = ulong.CreateTruncating(_codes.At(shape));
-            var terms = ulong.MaxValue;
-            for (var i = 0; i < rows.Length; i++)
-            {
-                (var position, code) = Math.DivRem(code, _product.Radices[i]);
-                terms &= _terms[i][position];
-                rows[i] = (int)position * _steps;
-            }
-
-            var free = _masks.StepsOf(terms);
-            candidates.Note(_masks.FreeForwardSteps(free), _masks.FreeTurns(free));
-            candidates.Clash = candidates.Clash < 0 && _masks.Clash(free) ? shape : candidates.Clash;
-            for (; free != 0; free &= free - 1)
-            {
-                var step = BitOperations.TrailingZeroCount(free);
-                var next = T.Zero;
-                for (var i = 0; i < rows.Length; i++)
-                {
-                    next += _parts[i][rows[i] + step];
-                }
-
-                var record = ulong.CreateTruncating(next);
-                candidates.Records[count] = record;
-                candidates.Origins[count] = ((uint)(shape - first) << 16) | (uint)step;
-                count += IsFound(record) ? 0 : 1;
-            }
-        }
-
-        candidates.Count = count;
     }
 }

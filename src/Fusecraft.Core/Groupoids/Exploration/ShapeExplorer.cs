@@ -158,6 +158,12 @@ internal sealed class ShapeExplorer
             {
                 if (!Add(_chunks[i]))
                 {
+                    // What was found from this distance is of the next one.
+                    if (Shapes.Count > levelEnd)
+                    {
+                        LevelStarts.Add(levelEnd);
+                    }
+
                     return;
                 }
             }
