@@ -1,7 +1,13 @@
-if (args is ["sympy"])
-{
-    return Fusecraft.Benchmarks.SymPyComparison.Run();
-}
+using Fusecraft.Benchmarks;
 
-BenchmarkDotNet.Running.BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
-return 0;
+switch (args)
+{
+    case ["sympy"]:
+        return SymPyComparison.Run();
+    case ["large-graph", ..]:
+        LargeGraph.Run(args[1..]);
+        return 0;
+    default:
+        BenchmarkDotNet.Running.BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
+        return 0;
+}

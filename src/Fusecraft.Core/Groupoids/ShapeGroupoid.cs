@@ -29,7 +29,7 @@ public sealed partial class ShapeGroupoid
     public bool IsComplete => _explorer.IsComplete;
 
     /// <summary>The number of shapes found.</summary>
-    public int ShapeCount => _explorer.Store.Count;
+    public int ShapeCount => _explorer.Shapes.Count;
 
     /// <summary>The number of pairs (shape, turn) whose forward step is free.</summary>
     public long FreeTurnCount => _explorer.FreeTurns;
@@ -40,7 +40,7 @@ public sealed partial class ShapeGroupoid
     /// <summary>The number of shapes where no step is free.</summary>
     public int StuckShapeCount => _explorer.StuckShapes;
 
-    internal ShapeStore Store => _explorer.Store;
+    internal ExploredShapes Store => _explorer.Shapes;
 
     /// <summary>The first shape of each distance, and at the end the number of shapes.</summary>
     internal IReadOnlyList<int> LevelStarts => _explorer.LevelStarts;
@@ -73,6 +73,8 @@ public sealed partial class ShapeGroupoid
         ArgumentNullException.ThrowIfNull(first);
         options ??= ExplorationOptions.Default;
         ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxShapes, 1, nameof(options));
+        ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxBytes, 1, nameof(options));
+        ArgumentOutOfRangeException.ThrowIfLessThan(options.DegreeOfParallelism, 1, nameof(options));
         var explorer = new ShapeExplorer(first.Mechanism, options, progress, cancellationToken);
         explorer.Run(first.Key);
         return new ShapeGroupoid(first.Mechanism, explorer);
@@ -133,25 +135,12 @@ public sealed partial class ShapeGroupoid
         return level >= 0 ? Math.Min(level, _explorer.LevelStarts.Count - 2) : ~level - 1;
     }
 
-    internal int Parent(int shape) => _explorer.Parents[shape];
+    internal int Parent(int shape) => Store.Parent(shape);
 
-    internal int ParentStep(int shape) => _explorer.ParentSteps[shape];
+    internal int ParentStep(int shape) => Store.ParentStep(shape);
 
     /// <summary>The number of the shape after a step; -1 where the step is barred or the shape was left out.</summary>
-    internal int Target(int shape, int step)
-    {
-        var moves = Mechanism.Board.Moves[step];
-        var key = Store.Key(shape);
-        if (!moves.IsFree(key))
-        {
-            return -1;
-        }
-
-        Span<ulong> next = stackalloc ulong[8];
-        next = key.Length <= next.Length ? next[..key.Length] : new ulong[key.Length];
-        moves.Move(key, next);
-        return Store.Find(next);
-    }
+    internal int Target(int shape, int step) => Store.Target(shape, step);
 
     private void RequireShape(int shape)
     {

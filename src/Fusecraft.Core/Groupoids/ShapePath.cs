@@ -11,7 +11,7 @@ internal static class ShapePath
     {
         var explorer = new ShapeExplorer(from.Mechanism, ExplorationOptions.Default, null, cancellation) { StopAt = to.Key.ToArray() };
         explorer.Run(from.Key);
-        var found = explorer.Store.Find(to.Key);
+        var found = explorer.Shapes.Find(to.Key);
         return found < 0 ? null : explorer.PathTo(found);
     }
 }

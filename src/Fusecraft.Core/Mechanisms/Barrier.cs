@@ -40,7 +40,7 @@ public sealed class Barrier
         }
 
         var marks = shape.Marks.ToHashSet();
-        var alternatives = step.Terms.Select(term => string.Join(" and ", Unmet(mechanism, term, marks)));
+        var alternatives = step.Terms.Select(term => string.Join(" and ", Unmet(mechanism, term, marks).DefaultIfEmpty("its condition in code does not hold")));
         return new Barrier(BarrierKind.Guard, string.Join(", or ", alternatives.Distinct()));
     }
 

@@ -1,11 +1,12 @@
 namespace Fusecraft.Mechanisms;
 
-/// <summary>Writes down a guard: the marks a step needs, those that bar it, and alternatives. See <see cref="GuardDefinition"/>.</summary>
+/// <summary>Writes down a guard: the marks a step needs, those that bar it, alternatives, conditions in code. See <see cref="GuardDefinition"/>.</summary>
 public sealed class GuardBuilder
 {
     private readonly List<string> _needs = [];
     private readonly List<string> _barredBy = [];
     private readonly List<GuardDefinition> _anyOf = [];
+    private Func<Shape, bool>? _when;
 
     internal GuardBuilder()
     {
@@ -39,6 +40,23 @@ public sealed class GuardBuilder
         return this;
     }
 
+    /// <summary>This must hold too, and what further calls name: a condition in code on the shape where the step starts.</summary>
+    /// <param name="condition">
+    /// Says whether the step may be done as far as this condition goes; blocks that the step would tear bar it all the same. It must be pure: the same answer for the same shape whenever and on
+    /// whichever thread it is asked. A backward step without a guard of its own stays free exactly where it undoes a free forward step: then the condition is asked about the shape it leads to.
+    /// </param>
+    /// <remarks>
+    /// A mechanism with such a guard is explored with the same results as with marks, only slower, and cannot be written to a file. Where marks and blocks can ever come is worked out as if
+    /// every guard held, so the condition may be asked about shapes that no path from home reaches.
+    /// </remarks>
+    public GuardBuilder When(Func<Shape, bool> condition)
+    {
+        ArgumentNullException.ThrowIfNull(condition);
+        var before = _when;
+        _when = before is null ? condition : shape => before(shape) && condition(shape);
+        return this;
+    }
+
     internal static GuardDefinition Describe(Action<GuardBuilder> describe)
     {
         ArgumentNullException.ThrowIfNull(describe);
@@ -47,5 +65,5 @@ public sealed class GuardBuilder
         return guard.ToDefinition();
     }
 
-    internal GuardDefinition ToDefinition() => new() { Needs = [.. _needs], BarredBy = [.. _barredBy], AnyOf = [.. _anyOf] };
+    internal GuardDefinition ToDefinition() => new() { Needs = [.. _needs], BarredBy = [.. _barredBy], AnyOf = [.. _anyOf], When = _when };
 }

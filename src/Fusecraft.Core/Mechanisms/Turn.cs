@@ -48,7 +48,7 @@ public sealed class Turn
     internal bool HasOwnBackGuard { get; }
 
     /// <summary>True when something besides torn blocks can bar the forward step.</summary>
-    internal bool HasGuard => Forward.Terms.All(term => term.Needs.Length + term.BarredBy.Length > 0);
+    internal bool HasGuard => Forward.Terms.All(term => term.Needs.Length + term.BarredBy.Length > 0 || term.When is not null);
 
     /// <inheritdoc/>
     public override string ToString() => Name;
@@ -56,5 +56,5 @@ public sealed class Turn
     // A condition holds before the step exactly when the moved condition holds after it.
     private static GuardTerm Moved(GuardTerm term, Permutation by) => new(
         [.. term.Needs.Select(need => (need.Mark, by[need.Site]))],
-        [.. term.BarredBy.Select(bar => (bar.Mark, by[bar.Site]))]);
+        [.. term.BarredBy.Select(bar => (bar.Mark, by[bar.Site]))]) { When = term.When, IsReadAtEnd = true };
 }

@@ -39,6 +39,13 @@ public sealed class TurnBuilder
         return this;
     }
 
+    /// <inheritdoc cref="GuardBuilder.When"/>
+    public TurnBuilder When(Func<Shape, bool> condition)
+    {
+        _guard.When(condition);
+        return this;
+    }
+
     /// <summary>These pieces come along although the turn moves none of their sites.</summary>
     /// <param name="pieces">Names of pieces.</param>
     public TurnBuilder Carries(params IEnumerable<string> pieces)

@@ -8,13 +8,15 @@ namespace Fusecraft.Mechanisms;
 /// The one representation all constraints reduce to. A slot is a place for one token: a bond between two pieces, or a mark on a site. A shape is a bitset over the slots that home's
 /// tokens can ever reach when guards are ignored and nothing is torn.
 /// </summary>
-internal sealed class ShapeBoard
+internal sealed partial class ShapeBoard
 {
     private readonly Mechanism _mechanism;
     private readonly List<Slot> _slots = [];
     private readonly Dictionary<Slot, int> _slotOf = [];
     private readonly HashSet<(int, int)>? _adjacent;
     private readonly StepMoves[] _moves;
+    private readonly Lazy<StepMasks?> _masks;
+    private readonly Lazy<ByteTables?> _byteTables;
 
     public ShapeBoard(Mechanism mechanism)
     {
@@ -51,8 +53,11 @@ internal sealed class ShapeBoard
         {
             var step = mechanism.Steps[s];
             var targets = _slots.Select(slot => After(slot, step.Permutation, pieceMaps[s], carries[s]) is { } next ? _slotOf[next] : -1).ToArray();
-            _moves[s] = new StepMoves(Words, targets, step.Terms, mark => _slotOf.TryGetValue(mark, out var slot) ? slot : null);
+            _moves[s] = new StepMoves(mechanism, Words, targets, step.Terms, mark => _slotOf.TryGetValue(mark, out var slot) ? slot : null);
         }
+
+        _masks = new Lazy<StepMasks?>(() => StepMasks.Of(mechanism, this));
+        _byteTables = new Lazy<ByteTables?>(() => Words == 1 && Masks is { } masks ? new ByteTables(this, masks) : null);
     }
 
     /// <summary>The number of 64-bit words of a shape's key.</summary>

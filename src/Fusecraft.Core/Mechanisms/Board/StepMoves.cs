@@ -14,12 +14,18 @@ internal sealed class StepMoves
     private readonly int[] _targets;
     private readonly int[] _sources;
 
+    // The conditions in code, one an alternative; null where there are none at all.
+    private readonly Mechanism _mechanism;
+    private readonly GuardTerm[]? _conditions;
+
+    /// <param name="mechanism">The mechanism.</param>
     /// <param name="words">The number of words of a key.</param>
     /// <param name="targets">For each slot the one its token comes to, or -1 where the token would be torn.</param>
     /// <param name="terms">The alternatives of the guard.</param>
     /// <param name="slotOf">The slot of a mark; null where the mark can never be there.</param>
-    public StepMoves(int words, int[] targets, IReadOnlyList<GuardTerm> terms, Func<Slot, int?> slotOf)
+    public StepMoves(Mechanism mechanism, int words, int[] targets, IReadOnlyList<GuardTerm> terms, Func<Slot, int?> slotOf)
     {
+        _mechanism = mechanism;
         _words = words;
         _targets = targets;
         _moved = new ulong[words];
@@ -37,6 +43,7 @@ internal sealed class StepMoves
         }
 
         var guards = new List<ulong>();
+        var kept = new List<GuardTerm>();
         foreach (var term in terms)
         {
             var needs = new ulong[words];
@@ -55,11 +62,28 @@ internal sealed class StepMoves
 
             guards.AddRange(needs);
             guards.AddRange(bars);
+            kept.Add(term);
         }
 
         _guards = [.. guards];
+        _conditions = kept.TrueForAll(term => term.When is null) ? null : [.. kept];
         _sources = Sources();
     }
+
+    /// <summary>The number of alternatives of the guard; where there is none the step is never free.</summary>
+    public int AlternativeCount => _guards.Length / (2 * _words);
+
+    /// <summary>True when a condition in code has a say, so that the masks alone do not tell whether the step is free.</summary>
+    public bool HasConditions => _conditions is not null;
+
+    /// <summary>For each slot the one its token comes to, or -1 where the token would be torn.</summary>
+    public ReadOnlySpan<int> Targets => _targets;
+
+    /// <summary>The slots that an alternative needs.</summary>
+    public ReadOnlySpan<ulong> Needs(int alternative) => _guards.AsSpan(2 * alternative * _words, _words);
+
+    /// <summary>The slots that bar an alternative, those that would be torn among them.</summary>
+    public ReadOnlySpan<ulong> Bars(int alternative) => _guards.AsSpan(((2 * alternative) + 1) * _words, _words);
 
     /// <summary>True when one alternative of the guard holds and nothing would be torn.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
@@ -92,7 +116,7 @@ internal sealed class StepMoves
                 unmet |= (guards[at + i] & ~key[i]) | (guards[at + words + i] & key[i]);
             }
 
-            if (unmet == 0)
+            if (unmet == 0 && (_conditions is null || Holds(_conditions[at / (2 * words)], key)))
             {
                 return true;
             }
@@ -137,6 +161,19 @@ internal sealed class StepMoves
                 previous[source >> 6] |= 1UL << source;
             }
         }
+    }
+
+    // Nothing would be torn, so there is a shape where the step ends.
+    private bool Holds(GuardTerm term, ReadOnlySpan<ulong> key)
+    {
+        if (term.When is null || !term.IsReadAtEnd)
+        {
+            return term.When?.Invoke(new Shape(_mechanism, key)) ?? true;
+        }
+
+        var end = new ulong[_words];
+        Move(key, end);
+        return term.When(new Shape(_mechanism, end));
     }
 
     private int[] Sources()

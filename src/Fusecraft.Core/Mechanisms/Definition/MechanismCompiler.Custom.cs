@@ -178,7 +178,7 @@ internal sealed partial class MechanismCompiler
 
     private List<GuardTerm> ReadGuard(GuardDefinition guard, string path, NameTable names, HashSet<string> marks)
     {
-        var own = new GuardTerm(Read(guard.Needs, $"{path}.needs"), Read(guard.BarredBy, $"{path}.barredBy"));
+        var own = new GuardTerm(Read(guard.Needs, $"{path}.needs"), Read(guard.BarredBy, $"{path}.barredBy")) { When = guard.When };
         if (guard.AnyOf.IsEmpty)
         {
             return [own];

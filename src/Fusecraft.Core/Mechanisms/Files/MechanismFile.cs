@@ -60,6 +60,7 @@ public static class MechanismFile
 
     /// <summary>The text of a mechanism file: indented by two spaces, lines ended by a line feed, short lists on one line, defaults left out.</summary>
     /// <param name="definition">A definition; written as it is, right or wrong.</param>
+    /// <exception cref="NotSupportedException">A turn has a guard written in code.</exception>
     public static string Write(MechanismDefinition definition)
     {
         ArgumentNullException.ThrowIfNull(definition);
@@ -77,6 +78,7 @@ public static class MechanismFile
     /// <summary>Writes a mechanism file. An older file of that name is replaced whole, or stays as it was where writing fails.</summary>
     /// <param name="mechanism">The mechanism whose definition is written.</param>
     /// <param name="path">The file's path, by custom with the extension <see cref="Extension"/>.</param>
+    /// <exception cref="NotSupportedException">A turn has a guard written in code.</exception>
     /// <exception cref="IOException">The file cannot be written.</exception>
     public static void Save(Mechanism mechanism, string path)
     {

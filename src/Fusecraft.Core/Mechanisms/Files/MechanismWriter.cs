@@ -7,6 +7,11 @@ internal static class MechanismWriter
 {
     internal static string Write(MechanismDefinition definition)
     {
+        if (definition.Turns.FirstOrDefault(turn => turn.Guard.HasCode || turn.Back is { HasCode: true }) is { } coded)
+        {
+            throw new NotSupportedException($"Turn {coded.Name} has a guard written in code, which a file cannot hold.");
+        }
+
         var file = JsonLayout.Object();
         Text(file, "$schema", definition.Schema);
         Text(file, "format", MechanismFile.Format);

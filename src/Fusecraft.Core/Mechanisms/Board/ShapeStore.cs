@@ -1,10 +1,9 @@
 using System.Numerics;
 using System.Runtime.CompilerServices;
-using Fusecraft.Mechanisms;
 
-namespace Fusecraft.Groupoids;
+namespace Fusecraft.Mechanisms;
 
-/// <summary>All shapes found, each once, numbered in the order of their finding: the keys in one block of memory, and an open-addressing table of their numbers.</summary>
+/// <summary>Shapes, or other keys of so many words, each once, numbered in the order of their finding: the keys in one block of memory, and an open-addressing table of their numbers.</summary>
 internal sealed class ShapeStore
 {
     private const int InitialCapacity = 64;
