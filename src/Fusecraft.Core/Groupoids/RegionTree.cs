@@ -24,6 +24,9 @@ internal sealed class RegionTree
     /// <summary>The shapes of the region in breadth-first order; the root first.</summary>
     public int[] Order { get; }
 
+    /// <summary>True when all shapes are in the order of their numbers.</summary>
+    public bool IsInOrder => Order[0] == 0 && Order[^1] == Order.Length - 1;
+
     public bool Contains(int shape) => shape == Root || _parents[shape] >= 0;
 
     /// <summary>The shape before this one on the path from the root; -1 for the root.</summary>

@@ -15,6 +15,6 @@ public sealed partial class ShapeGroupoid
     public VertexGroup VertexGroupAt(int shape, CancellationToken cancellationToken = default)
     {
         RequireShape(shape);
-        return VertexGroupExtraction.Run(this, RegionTree.Of(this, shape), cancellationToken);
+        return VertexGroupExtraction.Run(this, RegionTree.Of(this, shape), Environment.ProcessorCount, cancellationToken);
     }
 }

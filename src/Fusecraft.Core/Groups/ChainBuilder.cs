@@ -95,6 +95,9 @@ internal sealed class ChainBuilder<T>
         return _tables.SiftsAway(_sifted);
     }
 
+    /// <summary>The same, in the memory of the permutation itself, which is left in ruins; safe from several threads while nothing is added.</summary>
+    public bool ContainsInPlace(Span<T> permutation) => _tables.SiftsAway(permutation);
+
     /// <summary>Adds a generator (padded lanes), if the chain does not hold it yet, and lets random elements extend the chain. Says whether it did.</summary>
     public bool Add(ReadOnlySpan<T> generator, CancellationToken cancellation = default)
     {

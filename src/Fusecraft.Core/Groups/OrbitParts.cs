@@ -14,6 +14,7 @@ internal sealed class OrbitParts
     private readonly int[] _partOf;
     private readonly int[] _placeOf;
     private readonly bool _hasTwist;
+    private readonly PermutationGroup? _local;
 
     /// <param name="generators">The image lists of the generators.</param>
     /// <param name="partOf">For each point the number of its part, in the order of their first points.</param>
@@ -39,9 +40,9 @@ internal sealed class OrbitParts
                 }
             }
 
-            var local = PermutationGroup.Generate(locals, _partSize);
-            order = local.Order;
-            _hasTwist = local.IsAbelian;
+            _local = PermutationGroup.Generate(locals, _partSize);
+            order = _local.Order;
+            _hasTwist = _local.IsAbelian;
         }
 
         WreathOrder = BigInteger.Pow(order, parts);
@@ -59,6 +60,12 @@ internal sealed class OrbitParts
 
     /// <summary>The order of what signs and twist sums could be.</summary>
     public BigInteger TargetOrder { get; }
+
+    /// <summary>The action of a part's stabilizer on the part, on the places of the first part; null where parts are single points.</summary>
+    public PermutationGroup? PartAction => _local;
+
+    /// <summary>For each part its points, in the order to which products of generators bring those of the first part.</summary>
+    public ReadOnlySpan<int[]> Frames => _frames;
 
     /// <summary>Parts of one point: all that is known of an orbit without block systems.</summary>
     public static OrbitParts Points(int[][] generators, int size)
@@ -83,12 +90,7 @@ internal sealed class OrbitParts
             return;
         }
 
-        var sum = Permutation.Identity;
-        for (var part = 0; part < _frames.Length; part++)
-        {
-            sum *= Local(generator, part);
-        }
-
+        var sum = TwistSum(generator);
         var first = images.Count;
         for (var place = 0; place < _partSize; place++)
         {
@@ -96,7 +98,20 @@ internal sealed class OrbitParts
         }
     }
 
-    private bool IsOddExchange(int generator)
+    /// <summary>The product of a generator's local actions, which commute.</summary>
+    public Permutation TwistSum(int generator)
+    {
+        var sum = Permutation.Identity;
+        for (var part = 0; part < _frames.Length; part++)
+        {
+            sum *= Local(generator, part);
+        }
+
+        return sum;
+    }
+
+    /// <summary>True when a generator exchanges the parts by an odd permutation.</summary>
+    public bool IsOddExchange(int generator)
     {
         var seen = new bool[_frames.Length];
         var isOdd = false;

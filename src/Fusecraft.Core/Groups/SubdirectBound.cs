@@ -13,104 +13,70 @@ namespace Fusecraft.Groups;
 /// <para>The sign of the exchange of parts and, where A is abelian, the product of the local actions (the twist sum) are homomorphisms of A ≀ Sym(k) onto C_2 and A. All members lie in the preimage of the subgroup K
 /// that the generators' images make in the product of those targets, so |G| ≤ ∏ |A|^k k! · |K| / ∏ (2·|A|).</para>
 /// </remarks>
-internal static class SubdirectBound
+internal sealed class SubdirectBound
 {
     /// <summary>Larger orbits are taken without block systems, which would cost more than they save.</summary>
     private const int LargestOrbit = 512;
 
+    private readonly List<(ImmutableArray<int> Orbit, OrbitParts Parts)> _kept = [];
+    private readonly List<(int Kept, int[] Match)> _leftOut = [];
+
+    private SubdirectBound(PermutationGroup group) => Group = group;
+
+    /// <summary>The group.</summary>
+    public PermutationGroup Group { get; }
+
+    /// <summary>The orbits of two or more points, one of each class of equivalent ones, and what the group does there.</summary>
+    public IReadOnlyList<(ImmutableArray<int> Orbit, OrbitParts Parts)> Kept => _kept;
+
+    /// <summary>The other orbits: the number of an equivalent one among those kept, and the partners of its points in order.</summary>
+    public IReadOnlyList<(int Kept, int[] Match)> LeftOut => _leftOut;
+
+    /// <summary>The order of the group is at most this.</summary>
+    public BigInteger Bound { get; private set; }
+
+    public static BigInteger Of(PermutationGroup group, ReadOnlySpan<Permutation> fixing, CancellationToken cancellation) => Analyse(group, fixing, cancellation).Bound;
+
     /// <param name="group">Any group.</param>
     /// <param name="fixing">Some members that fix the first point moved; they save work.</param>
     /// <param name="cancellation">Ends the work early.</param>
-    public static BigInteger Of(PermutationGroup group, ReadOnlySpan<Permutation> fixing, CancellationToken cancellation)
+    public static SubdirectBound Analyse(PermutationGroup group, ReadOnlySpan<Permutation> fixing, CancellationToken cancellation)
     {
-        var parts = new List<OrbitParts>();
-        var kept = new List<int[][]>();
+        var bound = new SubdirectBound(group);
+        var actions = new List<int[][]>();
         var placeOf = new int[group.Degree];
+        var order = BigInteger.One;
         foreach (var orbit in group.MovedOrbits)
         {
             cancellation.ThrowIfCancellationRequested();
-            var generators = ActionOn(group.Generators.AsSpan(), orbit, placeOf);
-            if (!kept.Exists(other => AreEquivalent(other, generators)))
+            var generators = EquivalentOrbits.ActionOn(group.Generators.AsSpan(), orbit, placeOf);
+            if (bound.LeavesOut(orbit, generators, actions))
             {
-                kept.Add(generators);
-                parts.Add(BestParts(generators, parts.Count == 0 ? ActionOn(fixing, orbit, placeOf) : []));
+                continue;
             }
+
+            var parts = BestParts(generators, actions.Count == 0 ? EquivalentOrbits.ActionOn(fixing, orbit, placeOf) : []);
+            actions.Add(generators);
+            bound._kept.Add((orbit, parts));
+            order *= parts.WreathOrder / parts.TargetOrder;
         }
 
-        var order = BigInteger.One;
-        foreach (var part in parts)
-        {
-            order *= part.WreathOrder / part.TargetOrder;
-        }
-
-        return order * ImageOrder(group.Generators.Length, parts);
+        bound.Bound = order * bound.ImageOrder();
+        return bound;
     }
 
-    private static int[][] ActionOn(ReadOnlySpan<Permutation> members, ImmutableArray<int> orbit, int[] placeOf)
+    private bool LeavesOut(ImmutableArray<int> orbit, int[][] generators, List<int[][]> actions)
     {
-        for (var place = 0; place < orbit.Length; place++)
+        for (var i = 0; i < actions.Count; i++)
         {
-            placeOf[orbit[place]] = place;
-        }
-
-        var generators = new int[members.Length][];
-        for (var i = 0; i < generators.Length; i++)
-        {
-            generators[i] = new int[orbit.Length];
-            for (var place = 0; place < orbit.Length; place++)
+            if (EquivalentOrbits.Match(actions[i], generators) is { } match)
             {
-                generators[i][place] = placeOf[members[i][orbit[place]]];
-            }
-        }
-
-        return generators;
-    }
-
-    // Some bijection commutes with all generators: it is known by the image of one point.
-    private static bool AreEquivalent(int[][] one, int[][] other)
-    {
-        if (one.Length == 0 || one[0].Length != other[0].Length)
-        {
-            return false;
-        }
-
-        var images = new int[one[0].Length];
-        var points = new int[images.Length];
-        for (var image = 0; image < images.Length; image++)
-        {
-            if (IsEquivalence(one, other, image, images, points))
-            {
+                _leftOut.Add((i, Array.ConvertAll(match, place => orbit[place])));
                 return true;
             }
         }
 
         return false;
-    }
-
-    private static bool IsEquivalence(int[][] one, int[][] other, int firstImage, int[] images, int[] points)
-    {
-        Array.Fill(images, -1);
-        images[0] = firstImage;
-        points[0] = 0;
-        var count = 1;
-        for (var i = 0; i < count; i++)
-        {
-            for (var generator = 0; generator < one.Length; generator++)
-            {
-                var (next, image) = (one[generator][points[i]], other[generator][images[points[i]]]);
-                if (images[next] < 0)
-                {
-                    images[next] = image;
-                    points[count++] = next;
-                }
-                else if (images[next] != image)
-                {
-                    return false;
-                }
-            }
-        }
-
-        return true;
     }
 
     // The division that gives the least bound. What fixes point 0 carries the division that unites it with a point to itself, so it unites it with the images of that point as well.
@@ -187,16 +153,16 @@ internal static class SubdirectBound
     }
 
     // The order of the subgroup that the generators make in the product of all targets, as a permutation group: each target acts on points of its own.
-    private static BigInteger ImageOrder(int generators, List<OrbitParts> parts)
+    private BigInteger ImageOrder()
     {
         var images = new HashSet<Permutation>();
         var degree = 0;
-        for (var generator = 0; generator < generators; generator++)
+        for (var generator = 0; generator < Group.Generators.Length; generator++)
         {
             var image = new List<int>();
-            foreach (var part in parts)
+            foreach (var (_, parts) in _kept)
             {
-                part.AppendTarget(generator, image);
+                parts.AppendTarget(generator, image);
             }
 
             images.Add(Permutation.FromTrustedImages<int>(image.ToArray()));

@@ -16,6 +16,7 @@ public sealed partial class Mechanism
     private readonly Lazy<PermutationGroup> _unguardedGroup;
     private readonly Lazy<StepNames> _stepNames;
     private readonly Lazy<SiteMover> _siteMover;
+    private readonly Lazy<SiteRows> _siteRows;
 
     internal Mechanism(
         MechanismDefinition definition,
@@ -53,6 +54,7 @@ public sealed partial class Mechanism
         Steps = steps.DrainToImmutable();
         _board = new Lazy<ShapeBoard>(() => new ShapeBoard(this));
         _siteMover = new Lazy<SiteMover>(() => SiteMover.Of(this));
+        _siteRows = new Lazy<SiteRows>(() => Mechanisms.SiteRows.Of(this));
         _stepNames = new Lazy<StepNames>(() => new StepNames(Steps));
         _unguardedGroup = new Lazy<PermutationGroup>(() => PermutationGroup.Generate(Turns.Select(turn => turn.Permutation), SiteCount));
     }
@@ -124,6 +126,8 @@ public sealed partial class Mechanism
     public bool IsReversible => Turns.All(turn => turn.IsReversible);
 
     internal ShapeBoard Board => _board.Value;
+
+    internal SiteRows SiteRows => _siteRows.Value;
 
     internal StepNames StepNames => _stepNames.Value;
 

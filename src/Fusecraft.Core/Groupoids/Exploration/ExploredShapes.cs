@@ -59,6 +59,19 @@ internal abstract class ExploredShapes
     /// <summary>The number of the shape after a step; -1 where the step is barred or the shape is not there.</summary>
     public abstract int Target(int shape, int step);
 
+    /// <summary>For each of some shapes, and for each of some steps, the same as <see cref="Target"/>. May run on several threads.</summary>
+    public virtual void Targets(ReadOnlySpan<int> shapes, ReadOnlySpan<int> steps, Span<int> targets)
+    {
+        var at = 0;
+        foreach (var shape in shapes)
+        {
+            foreach (var step in steps)
+            {
+                targets[at++] = Target(shape, step);
+            }
+        }
+    }
+
     /// <summary>Writes the successors of some shapes that may be new. May run on several threads while nothing is added.</summary>
     public abstract void Generate(int first, int end, Candidates candidates);
 

@@ -123,7 +123,7 @@ public sealed class GroupPortrait
         foreach (var points in Group.MovedOrbits)
         {
             cancellation.ThrowIfCancellationRequested();
-            var earlier = Enumerable.Range(0, orbits.Count).Where(i => orbits[i].EquivalentTo is null && OrbitImage.AreEquivalent(Group, orbits[i].Points, points)).Cast<int?>().FirstOrDefault();
+            var earlier = Enumerable.Range(0, orbits.Count).Where(i => orbits[i].EquivalentTo is null && EquivalentOrbits.Match(Group, orbits[i].Points, points) is not null).Cast<int?>().FirstOrDefault();
             var action = earlier is { } index ? orbits[index].Action : Describe(points);
             orbits.Add(new OrbitPortrait(points, action, Group.Order / action.Group.Order, earlier));
         }
