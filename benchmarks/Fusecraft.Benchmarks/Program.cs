@@ -4,6 +4,10 @@ if (args is ["large-graph", ..])
 {
     LargeGraph.Run(args[1..]);
 }
+else if (args is ["small-graphs"])
+{
+    SmallGraphs.Run();
+}
 else
 {
     BenchmarkDotNet.Running.BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);

@@ -77,6 +77,7 @@ internal sealed partial class ProductShapes<T> : ExploredShapes
 
     public override int Target(int shape, int step) => TryMove(shape, step, out var code) ? NumberOf(code) : -1;
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public override int Add(Candidates candidates, int limit)
     {
         var room = (int)Math.Min(limit, (long)Count + candidates.Count);
@@ -155,6 +156,7 @@ internal sealed partial class ProductShapes<T> : ExploredShapes
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Number(int first, int end)
     {
         for (var shape = first; shape < end; shape++)
