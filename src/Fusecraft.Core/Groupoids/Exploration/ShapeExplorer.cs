@@ -134,6 +134,7 @@ internal sealed class ShapeExplorer
     private void Finish()
     {
         LevelStarts.Add(Shapes.Count);
+        _chunks.ForEach(chunk => chunk.Release());
         _chunks.Clear();
         Shapes.Finish(_options.DegreeOfParallelism);
     }
