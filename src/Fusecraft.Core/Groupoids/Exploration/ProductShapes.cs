@@ -159,9 +159,27 @@ internal sealed partial class ProductShapes<T> : ExploredShapes
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Number(int first, int end)
     {
-        for (var shape = first; shape < end; shape++)
+        Span<int> places = stackalloc int[Batch];
+        for (var start = first; start < end; start += Batch)
         {
-            _numbers[PlaceOf(ulong.CreateTruncating(_codes.At(shape)))] = shape;
+            var count = Math.Min(Batch, end - start);
+            for (var i = 0; i < count; i++)
+            {
+                var code = ulong.CreateTruncating(_codes.At(start + i));
+                Announce(ref _found[code >> 6]);
+                Announce(ref _before[code >> (6 + GroupShift)]);
+            }
+
+            for (var i = 0; i < count; i++)
+            {
+                places[i] = PlaceOf(ulong.CreateTruncating(_codes.At(start + i)));
+                Announce(ref _numbers[places[i]]);
+            }
+
+            for (var i = 0; i < count; i++)
+            {
+                _numbers[places[i]] = start + i;
+            }
         }
     }
 
