@@ -7,6 +7,9 @@ switch (args)
     case ["large-graph", ..]:
         LargeGraph.Run(args[1..]);
         return 0;
+    case ["small-graphs"]:
+        SmallGraphs.Run();
+        return 0;
     default:
         BenchmarkDotNet.Running.BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
         return 0;

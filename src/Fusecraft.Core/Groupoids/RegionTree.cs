@@ -27,6 +27,13 @@ internal sealed class RegionTree
     /// <summary>True when all shapes are in the order of their numbers.</summary>
     public bool IsInOrder => Order[0] == 0 && Order[^1] == Order.Length - 1;
 
+    /// <summary>Tells the memory that the origin of a shape will be asked for.</summary>
+    public void Announce(int shape)
+    {
+        Memory.Announce(ref _parents[shape]);
+        Memory.Announce(ref _steps[shape]);
+    }
+
     public bool Contains(int shape) => shape == Root || _parents[shape] >= 0;
 
     /// <summary>The shape before this one on the path from the root; -1 for the root.</summary>

@@ -56,5 +56,9 @@ public sealed class Turn
     // A condition holds before the step exactly when the moved condition holds after it.
     private static GuardTerm Moved(GuardTerm term, Permutation by) => new(
         [.. term.Needs.Select(need => (need.Mark, by[need.Site]))],
-        [.. term.BarredBy.Select(bar => (bar.Mark, by[bar.Site]))]) { When = term.When, IsReadAtEnd = true };
+        [.. term.BarredBy.Select(bar => (bar.Mark, by[bar.Site]))])
+    {
+        When = term.When,
+        IsReadAtEnd = true,
+    };
 }

@@ -1,12 +1,12 @@
+using System.Buffers;
+
 namespace Fusecraft.Groupoids;
 
-/// <summary>Successors of a few shapes in the order of their finding: those that may be new, each as a record with the shape and the step it was found by. Used again and again.</summary>
+/// <summary>Successors of a few shapes in the order of their finding: those that may be new, each as a record with the shape and the step it was found by. Used again and again; the arrays are borrowed.</summary>
 internal sealed class Candidates
 {
-    private ulong[] _records = [];
-
     /// <summary>The records one after the other.</summary>
-    public ulong[] Records => _records;
+    public ulong[] Records { get; private set; } = [];
 
     /// <summary>For each candidate the shape, counted from the first of these, and the step in the lower 16 bits.</summary>
     public uint[] Origins { get; private set; } = [];
@@ -33,16 +33,18 @@ internal sealed class Candidates
     public void Reset(int first, int capacity, int words)
     {
         (First, Count, FreeForwardSteps, DeadEnds, StuckShapes, Clash) = (first, 0, 0, 0, 0, -1);
-        if (capacity > Origins.Length)
-        {
-            Origins = new uint[capacity];
-            Hashes = new ulong[capacity];
-        }
+        Origins = Large(Origins, capacity);
+        Hashes = Large(Hashes, capacity);
+        Records = Large(Records, capacity * words);
+    }
 
-        if (capacity * words > _records.Length)
-        {
-            _records = new ulong[capacity * words];
-        }
+    /// <summary>Gives the arrays back.</summary>
+    public void Release()
+    {
+        Return(Origins);
+        Return(Hashes);
+        Return(Records);
+        (Origins, Hashes, Records) = ([], [], []);
     }
 
     /// <summary>Counts a shape by its free steps.</summary>
@@ -51,5 +53,24 @@ internal sealed class Candidates
         FreeForwardSteps += freeForwardSteps;
         DeadEnds += freeTurns == 1 ? 1 : 0;
         StuckShapes += freeTurns == 0 ? 1 : 0;
+    }
+
+    private static T[] Large<T>(T[] array, int length)
+    {
+        if (length <= array.Length)
+        {
+            return array;
+        }
+
+        Return(array);
+        return ArrayPool<T>.Shared.Rent(length);
+    }
+
+    private static void Return<T>(T[] array)
+    {
+        if (array.Length > 0)
+        {
+            ArrayPool<T>.Shared.Return(array);
+        }
     }
 }

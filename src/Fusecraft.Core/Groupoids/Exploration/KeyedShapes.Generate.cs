@@ -72,6 +72,7 @@ internal sealed partial class KeyedShapes<TWidth>
         return names;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void GenerateByMoves(int start, int stop, Candidates candidates, Span<int> lastOfName)
     {
         var words = TWidth.Words(Words);
@@ -108,6 +109,7 @@ internal sealed partial class KeyedShapes<TWidth>
         candidates.Count = count;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void GenerateByTables(ByteTables tables, int start, int stop, Candidates candidates)
     {
         var masks = Mechanism.Board.Masks!;
@@ -139,6 +141,7 @@ internal sealed partial class KeyedShapes<TWidth>
     }
 
     // Look-ups in three rounds, each announcing what the next one reads: table lines, keys, comparison.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private unsafe void DropKnown(int from, Candidates candidates)
     {
         var words = TWidth.Words(Words);

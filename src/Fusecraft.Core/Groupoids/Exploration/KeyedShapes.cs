@@ -60,6 +60,7 @@ internal sealed partial class KeyedShapes<TWidth> : ExploredShapes
         return Find(next);
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public override int Add(Candidates candidates, int limit)
     {
         const int Ahead = 12;
@@ -237,6 +238,7 @@ internal sealed partial class KeyedShapes<TWidth> : ExploredShapes
         _table[at] = (Tag(hash) << 32) | (uint)number;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Grow()
     {
         _table = HugePages.AllocateZeroed<ulong>(checked(2 * _table.Length));

@@ -8,6 +8,17 @@ internal static class Memory
 {
     private const int Line = 64;
 
+    /// <summary>Announces an entry.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static unsafe void Announce<T>(ref T entry)
+        where T : unmanaged
+    {
+        if (Sse.IsSupported)
+        {
+            Sse.Prefetch0(Unsafe.AsPointer(ref entry));
+        }
+    }
+
     /// <summary>Announces some bytes.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static unsafe void Announce(ref byte start, int length)

@@ -44,6 +44,7 @@ internal sealed partial class ProductShapes<T>
     }
 
     // The positions of each shape on the tracks.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Locate(int start, int stop, Span<int> positions)
     {
         var at = 0;
@@ -62,6 +63,7 @@ internal sealed partial class ProductShapes<T>
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void MoveTwo(int start, int stop, Span<int> positions, Candidates candidates)
     {
         ref var found = ref MemoryMarshal.GetArrayDataReference(_found);
@@ -87,6 +89,7 @@ internal sealed partial class ProductShapes<T>
         candidates.Count = (int)count;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void MoveAny(int start, int stop, Span<int> positions, Candidates candidates)
     {
         var count = candidates.Count;
@@ -128,6 +131,7 @@ internal sealed partial class ProductShapes<T>
     }
 
     // Each is written in any case, and kept if it is new: cheaper than a jump that nothing foretells.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void DropFound(int from, Candidates candidates)
     {
         ref var found = ref MemoryMarshal.GetArrayDataReference(_found);

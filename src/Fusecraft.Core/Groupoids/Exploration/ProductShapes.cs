@@ -77,6 +77,63 @@ internal sealed partial class ProductShapes<T> : ExploredShapes
 
     public override int Target(int shape, int step) => TryMove(shape, step, out var code) ? NumberOf(code) : -1;
 
+    // In rounds, each announcing to the memory what the next one reads: bits and counts, then numbers.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    public override void Targets(ReadOnlySpan<int> shapes, ReadOnlySpan<int> steps, Span<int> targets)
+    {
+        using var scratch = new Permutations.Scratch<ulong>(shapes.Length * steps.Length);
+        var codes = scratch.Span;
+        var at = 0;
+        Span<int> positions = stackalloc int[_parts.Length];
+        foreach (var shape in shapes)
+        {
+            var code = ulong.CreateTruncating(_codes.At(shape));
+            var terms = ulong.MaxValue;
+            for (var i = 0; i < positions.Length; i++)
+            {
+                (var position, code) = Math.DivRem(code, _product.Radices[i]);
+                positions[i] = (int)position;
+                terms &= _terms[i][position];
+            }
+
+            var free = _masks.StepsOf(terms);
+            foreach (var step in steps)
+            {
+                targets[at] = -1;
+                if ((free >> step & 1) != 0)
+                {
+                    var next = T.Zero;
+                    for (var i = 0; i < positions.Length; i++)
+                    {
+                        next += _parts[i][(positions[i] * _steps) + step];
+                    }
+
+                    codes[at] = ulong.CreateTruncating(next);
+                    targets[at] = 0;
+                    Announce(ref _found[codes[at] >> 6]);
+                    Announce(ref _before[codes[at] >> (6 + GroupShift)]);
+                }
+
+                at++;
+            }
+        }
+
+        for (var i = 0; i < at; i++)
+        {
+            targets[i] = targets[i] == 0 && IsFound(codes[i]) ? PlaceOf(codes[i]) : -1;
+            if (targets[i] >= 0)
+            {
+                Announce(ref _numbers[targets[i]]);
+            }
+        }
+
+        for (var i = 0; i < at; i++)
+        {
+            targets[i] = targets[i] >= 0 ? _numbers[targets[i]] : -1;
+        }
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public override int Add(Candidates candidates, int limit)
     {
         var room = (int)Math.Min(limit, (long)Count + candidates.Count);
@@ -155,11 +212,30 @@ internal sealed partial class ProductShapes<T> : ExploredShapes
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Number(int first, int end)
     {
-        for (var shape = first; shape < end; shape++)
+        Span<int> places = stackalloc int[Batch];
+        for (var start = first; start < end; start += Batch)
         {
-            _numbers[PlaceOf(ulong.CreateTruncating(_codes.At(shape)))] = shape;
+            var count = Math.Min(Batch, end - start);
+            for (var i = 0; i < count; i++)
+            {
+                var code = ulong.CreateTruncating(_codes.At(start + i));
+                Announce(ref _found[code >> 6]);
+                Announce(ref _before[code >> (6 + GroupShift)]);
+            }
+
+            for (var i = 0; i < count; i++)
+            {
+                places[i] = PlaceOf(ulong.CreateTruncating(_codes.At(start + i)));
+                Announce(ref _numbers[places[i]]);
+            }
+
+            for (var i = 0; i < count; i++)
+            {
+                _numbers[places[i]] = start + i;
+            }
         }
     }
 

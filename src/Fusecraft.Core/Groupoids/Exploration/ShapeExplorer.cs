@@ -16,11 +16,17 @@ internal sealed class ShapeExplorer
 
     private const int MaxChunkShapes = 1 << 10;
 
-    /// <summary>The product of tracks is tried first at so many shapes, then each time there are four times as many.</summary>
-    private const int FirstProductTry = 1 << 12;
+    /// <summary>Fewer pieces of work are not worth asking other threads.</summary>
+    private const int ParallelChunks = 4;
 
-    /// <summary>The bits of a product that a shape may cost; then they take less memory than a table of keys.</summary>
-    private const ulong BitsAShape = 256;
+    /// <summary>The product of tracks is tried first at so many shapes, then each time there are four times as many.</summary>
+    private const int FirstProductTry = 1 << 14;
+
+    /// <summary>The bits of a product that a shape may cost when they are first set up.</summary>
+    private const ulong BitsAShape = 512;
+
+    /// <summary>A product of so many is set up at no cost worth mentioning.</summary>
+    private const ulong SmallProduct = 1UL << 23;
 
     private const ulong MaxProduct = 1UL << 36;
 
@@ -128,6 +134,7 @@ internal sealed class ShapeExplorer
     private void Finish()
     {
         LevelStarts.Add(Shapes.Count);
+        _chunks.ForEach(chunk => chunk.Release());
         _chunks.Clear();
         Shapes.Finish(_options.DegreeOfParallelism);
     }
@@ -179,7 +186,7 @@ internal sealed class ShapeExplorer
             _chunks.Add(new Candidates());
         }
 
-        if (chunks == 1 || _options.DegreeOfParallelism == 1)
+        if (chunks < ParallelChunks || _options.DegreeOfParallelism == 1)
         {
             for (var i = 0; i < chunks; i++)
             {
@@ -233,7 +240,7 @@ internal sealed class ShapeExplorer
         _nextProductTry = (int)Math.Min(int.MaxValue, 4L * _nextProductTry);
         if (!MayUseProduct
             || _mechanism.Board.ProductWithin(Shapes.Count) is not { } product
-            || product.Size > Math.Min(MaxProduct, BitsAShape * (ulong)Shapes.Count)
+            || product.Size > Math.Min(MaxProduct, Math.Max(SmallProduct, BitsAShape * (ulong)Shapes.Count))
             || Shapes.BytesFor(Shapes.Count) + Shapes.BytesFor(product, Shapes.Count) > _options.MaxBytes)
         {
             return;

@@ -42,19 +42,19 @@ internal sealed class TreeLabels
     /// <summary>The row held for a shape may be read from here; null where it is recomputed.</summary>
     public ref byte Held(int shape) => ref _inverses.At(_rowOf is null ? shape : Math.Max(0, _rowOf[shape]));
 
-    /// <summary>Writes the inverse of the permutation of the path to a shape.</summary>
+    /// <summary>The inverse of the permutation of the path to a shape; where it is not held it is written into the memory given.</summary>
     /// <param name="shape">A shape of the tree.</param>
-    /// <param name="row">Gets the row.</param>
+    /// <param name="row">As long as a row.</param>
     /// <param name="scratch">As long as a row.</param>
-    public void LoadInverse(int shape, Span<byte> row, Span<byte> scratch)
+    public ReadOnlySpan<byte> Inverse(int shape, Span<byte> row, Span<byte> scratch)
     {
         if (_rowOf is null)
         {
-            _inverses.Entry(shape).CopyTo(row);
-            return;
+            return _inverses.Entry(shape);
         }
 
         Load(shape, row, scratch, _rowOf);
+        return row;
     }
 
     private void HoldAll()

@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using System.Runtime.CompilerServices;
 using Fusecraft.Groups;
 using Fusecraft.Mechanisms;
 using Fusecraft.Permutations;
@@ -145,7 +146,7 @@ internal sealed class VertexGroupExtraction
         {
             _owner = owner;
             var pitch = owner._rows.Pitch;
-            (_inverse, _there, _across, _loop, _scratch) = (new byte[pitch], new byte[pitch], new byte[pitch], new byte[pitch], new byte[2 * pitch]);
+            (_inverse, _there, _across, _loop, _scratch) = (new byte[pitch], new byte[pitch], new byte[pitch], new byte[pitch], new byte[pitch]);
             _targets = new int[Batch * owner._arcSteps.Length];
             _memory = owner._group.NewScratch();
         }
@@ -165,6 +166,7 @@ internal sealed class VertexGroupExtraction
         }
 
         /// <summary>The arcs from some shapes of the tree's order whose loops the group does not hold.</summary>
+        [MethodImpl(MethodImplOptions.AggressiveOptimization)]
         public List<(int Shape, int Step)> FindMissing(int first, int end)
         {
             var missing = new List<(int Shape, int Step)>();
@@ -178,6 +180,7 @@ internal sealed class VertexGroupExtraction
                     if (_targets[i] >= 0)
                     {
                         Memory.Announce(ref _owner._labels.Held(_targets[i]), _owner._rows.Pitch);
+                        _owner._tree.Announce(_targets[i]);
                     }
                 }
 
@@ -207,8 +210,7 @@ internal sealed class VertexGroupExtraction
 
         private void LoadThere(int shape)
         {
-            _owner._labels.LoadInverse(shape, _inverse, _scratch.AsSpan(0, _inverse.Length));
-            _owner._rows.Invert(_inverse, _there);
+            _owner._rows.Invert(_owner._labels.Inverse(shape, _inverse, _scratch), _there);
         }
 
         // The arc's shape has its label in _there.
@@ -216,8 +218,7 @@ internal sealed class VertexGroupExtraction
         {
             var pitch = _owner._rows.Pitch;
             _owner._rows.Compose(_there, _owner._steps.AsSpan(step * pitch, pitch), _across);
-            _owner._labels.LoadInverse(target, _inverse, _scratch.AsSpan(0, pitch));
-            _owner._rows.Compose(_across, _inverse, _loop);
+            _owner._rows.Compose(_across, _owner._labels.Inverse(target, _inverse, _scratch), _loop);
         }
     }
 }
