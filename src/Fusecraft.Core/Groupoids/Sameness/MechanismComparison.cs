@@ -141,11 +141,13 @@ public sealed class MechanismComparison
 
     private static string Explain(Mechanism first, HomeMatch home)
     {
-        var renamed = first.Turns.Where(turn => home.Steps[turn.Forward.Index].Name != turn.Forward.Name).Select(turn => $"{turn.Forward.Name} becomes {home.Steps[turn.Forward.Index].Name}").ToList();
-        var moved = renamed.Count == 0 ? "as it is" : $"with {string.Join(", ", renamed)}";
-        var held = home.IsRepinned ? ", held by another corner" : "";
+        var renamed = first.Turns.Where(turn => home.Steps[turn.Forward.Index].Name != turn.Forward.Name)
+            .Select(turn => $"{turn.Forward.Name} becomes {home.Steps[turn.Forward.Index].Name}").ToList();
+        var moved = renamed.Count == 0 ? "" : $", moved so that {string.Join(", ", renamed)},";
+        var held = home.IsRepinned ? ", held by another corner," : "";
         var path = home.Path.Length == 0 ? "is the home of the second" : $"is the shape of the second after {home.Path.Word}";
-        return $"The home of the first, {moved}{held}, {path}.";
+        var note = home.IsRepinned ? " Shapes are relative to the corner held, so their number and the vertex groups may differ; the states are as many." : "";
+        return $"The home of the first{(moved + held).Replace(",,", ",", StringComparison.Ordinal)} {path}.{note}";
     }
 
     private string ExplainDifference(HomeMatching matching)
