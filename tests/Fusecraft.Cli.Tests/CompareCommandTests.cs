@@ -48,7 +48,7 @@ public sealed class CompareCommandTests : IDisposable
         var outcome = await _bench.RunAsync("compare", _bench.Write("fused.fuse.json", Files.FusedCube), _bench.Write("plain.fuse.json", Files.PlainCube));
 
         Assert.StartsWith(
-            "Not the same puzzle.\nNo symmetry of the turns takes the home of the first to a shape of the second's home region. First difference: blocks, 1 and 0.\n", outcome.Output, StringComparison.Ordinal);
+            "Not the same puzzle.\nNo rotation or reflection that keeps the turns takes the home of the first to a shape of the second's home region. First difference: blocks, 1 and 0.\n", outcome.Output, StringComparison.Ordinal);
         Assert.Equal(ExitCodes.Negative, outcome.Code);
     }
 

@@ -31,6 +31,17 @@ public class ShapeOrbitsTests
         Assert.True(size == 2 || outOfReach > 0, "no fusing tested that a symmetry moves out of reach");
     }
 
+    // Own figures, from an independent program that knows no symmetry.
+    [Fact]
+    public void A_fused_cube_of_size_5_has_the_totals_of_another_program()
+    {
+        var orbits = ShapeOrbits.Explore(Make.Cube(5, "", "1,1,2 1,1,3", "5,2,1 5,3,1", "5,4,5 5,5,5", "5,4,1 5,5,1", "4,1,1 5,1,1", "2,1,5 3,1,5"));
+
+        Assert.Equal(1_748_304, orbits.ShapeCount);
+        Assert.Equal(11_903_832, orbits.FreeTurnCount);
+        Assert.True(orbits.RepresentativeCount < 40_000);
+    }
+
     [Fact]
     public void Random_mechanisms_have_the_totals_of_plain_exploration()
     {

@@ -102,7 +102,7 @@ public class SymmetryGroupTests
     public void All_symmetries_of_random_mechanisms_are_found()
     {
         var symmetric = 0;
-        for (var seed = 1UL; seed <= 1000; seed++)
+        for (var seed = 1UL; seed <= 600; seed++)
         {
             var definition = RandomMechanisms.From(seed);
             if (definition.Sites.Length > 5)
@@ -121,7 +121,7 @@ public class SymmetryGroupTests
             symmetric += brute.Count > 1 ? 1 : 0;
         }
 
-        Assert.True(symmetric > 50, $"only {symmetric} of them have a symmetry");
+        Assert.True(symmetric > 30, $"only {symmetric} of them have a symmetry");
     }
 
     [Fact]

@@ -7,7 +7,7 @@ namespace Fusecraft.Groupoids;
 /// <summary>The figures of two mechanisms side by side, those of their turns first, then those of their shapes, then those of their states.</summary>
 internal static class ComparisonFigures
 {
-    public static ImmutableArray<ComparedFigure> Of(ShapeGroupoid first, ShapeGroupoid second, VertexGroup? firstGroup, VertexGroup? secondGroup)
+    public static ImmutableArray<ComparedFigure> Of(ShapeGroupoid first, ShapeGroupoid second, VertexGroup? firstGroup, VertexGroup? secondGroup, CancellationToken cancellation)
     {
         return
         [
@@ -17,6 +17,7 @@ internal static class ComparisonFigures
             Figure("blocks", groupoid => groupoid.Mechanism.HomeBlocks.Length),
             Figure("marks", groupoid => groupoid.Mechanism.HomeMarks.Length),
             Complete("shapes", groupoid => groupoid.ShapeCount),
+            Complete("shapes up to symmetry", groupoid => ShapeOrbits.Explore(groupoid.Mechanism, cancellationToken: cancellation).RepresentativeCount),
             Complete("free turns", groupoid => groupoid.FreeTurnCount),
             Complete("dead ends", groupoid => groupoid.DeadEndCount),
             Complete("stuck shapes", groupoid => groupoid.StuckShapeCount),

@@ -24,16 +24,16 @@ internal sealed class HomeMatching
     /// <summary>False when a budget ended the search, so that there may be a match all the same.</summary>
     public bool IsDecided { get; private set; } = true;
 
-    /// <summary>True when no bijection of the sites takes turns to turns.</summary>
+    /// <summary>True when no bijection of the sites that was allowed takes turns to turns.</summary>
     public bool TurnsDiffer { get; private set; }
+
+    /// <summary>True for cubes of one size, which only rotations and reflections of the solid may move; else any bijection of the sites will do.</summary>
+    public bool IsOfSolids => _first.Definition.Family is CubeFamily one && _second.Mechanism.Definition.Family is CubeFamily other && one.Size == other.Size && one.CentreTwist == other.CentreTwist;
 
     public HomeMatch? Find()
     {
         IsDecided = _second.IsComplete;
-        return _first.Definition.Family is CubeFamily one && _second.Mechanism.Definition.Family is CubeFamily other
-                && one.Size == other.Size && one.CentreTwist == other.CentreTwist
-            ? FindAmongHoldings(isEven: one.Size % 2 == 0)
-            : FindAmongImages();
+        return IsOfSolids ? FindAmongHoldings(isEven: ((CubeFamily)_first.Definition.Family!).Size % 2 == 0) : FindAmongImages();
     }
 
     // A cube can be moved by the symmetries of the solid. Those that move the corner by which an even one is held change turns by rotations of the whole.

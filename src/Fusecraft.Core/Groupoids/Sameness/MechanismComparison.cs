@@ -87,12 +87,12 @@ public sealed class MechanismComparison
                 Verdict = home is null ? ComparisonVerdict.Undecided : ComparisonVerdict.SamePuzzle,
                 Reason = home is null ? "A budget ended the exploration before all shapes were found." : Explain(first, home),
                 HomeMatch = home,
-                Figures = ComparisonFigures.Of(one, other, null, null),
+                Figures = ComparisonFigures.Of(one, other, null, null, cancellationToken),
             };
         }
 
         var (group, otherGroup) = (one.VertexGroupAt(0, cancellationToken), other.VertexGroupAt(0, cancellationToken));
-        var figures = ComparisonFigures.Of(one, other, group, otherGroup);
+        var figures = ComparisonFigures.Of(one, other, group, otherGroup, cancellationToken);
         var graph = CompareGraphs(one, other, home, options, cancellationToken, out var haveSameGraph);
 
         // The first group, moved by the symmetry, is the one at the shape where its home has come to; the path back takes it home.
@@ -153,8 +153,9 @@ public sealed class MechanismComparison
     private string ExplainDifference(HomeMatching matching)
     {
         var homes = !matching.IsDecided ? "Whether some symmetry takes one home to a shape of the other was not settled."
-            : matching.TurnsDiffer ? "No bijection of the sites takes the turns of one to those of the other."
-            : "No symmetry of the turns takes the home of the first to a shape of the second's home region.";
+            : (matching.IsOfSolids ? "No rotation or reflection" : "No bijection of the sites") + (matching.TurnsDiffer
+                ? " takes the turns of one to those of the other."
+                : " that keeps the turns takes the home of the first to a shape of the second's home region.");
         var graphs = HaveSameShapeGraph switch
         {
             true => " Yet their shape graphs are alike under a renaming of turns.",
