@@ -58,6 +58,7 @@ internal static class Cli
         root.Add(SchemaCommand.Create(terminal));
         root.Add(CheckCommand.Create(terminal));
         root.Add(ExamineCommand.Create(terminal));
+        root.Add(CompareCommand.Create(terminal));
         root.Add(RouteCommand.Create(terminal));
         root.Add(SolveCommand.Create(terminal));
         root.Add(TraceCommand.Create(terminal));

@@ -17,6 +17,9 @@ internal static class CommonOptions
     public static Option<string> Text(string name, string valueName, string description) =>
         new(name) { Description = description, HelpName = valueName, Required = true };
 
+    public static Option<string[]> WithBlock(string description) =>
+        new("--with-block") { Description = description, HelpName = "PIECES", Arity = ArgumentArity.OneOrMore, AllowMultipleArgumentsPerToken = false };
+
     /// <summary>An option whose value is a whole number; anything else is wrong usage.</summary>
     public static Option<int?> Number(string name, int least, string description) => new(name)
     {

@@ -46,15 +46,7 @@ internal sealed class ExaminationTable
             table.AddRow([.. row.Select(cell => new Text(cell))]);
         }
 
-        var console = AnsiConsole.Create(new AnsiConsoleSettings
-        {
-            Ansi = AnsiSupport.No,
-            ColorSystem = ColorSystemSupport.NoColors,
-            Interactive = InteractionSupport.No,
-            Out = new AnsiConsoleOutput(terminal.Out),
-        });
-        console.Profile.Width = terminal.Width ?? 100_000;
-        console.Write(table);
+        PlainTable.Write(terminal, table);
         terminal.Out.WriteLine();
         terminal.Out.WriteLine("The vertex group is given by its order, the farthest shape by its steps from home; states are those reachable from home.");
         if (_someUnknown)

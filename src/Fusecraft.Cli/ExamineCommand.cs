@@ -12,13 +12,7 @@ internal static class ExamineCommand
         var files = CommonOptions.Files();
         var json = CommonOptions.Json("Prints one JSON object for each file, one a line.");
         var maxShapes = CommonOptions.Number("--max-shapes", 1, "Ends the exploration of a file when it has found N shapes and there are more.");
-        var withBlock = new Option<string[]>("--with-block")
-        {
-            Description = "Fuses these pieces, named with spaces between, before examining; may be given several times.",
-            HelpName = "PIECES",
-            Arity = ArgumentArity.OneOrMore,
-            AllowMultipleArgumentsPerToken = false,
-        };
+        var withBlock = CommonOptions.WithBlock("Fuses these pieces, named with spaces between, before examining; may be given several times.");
         var command = new ExampleCommand(
             "examine",
             "Counts shapes, regions and states, and says what loops can do. Several files give a table.",
