@@ -50,7 +50,13 @@ public sealed partial class RegionGraph
     /// <summary>The number of arrows within the region.</summary>
     public long ArrowCount => _out.ArcCount;
 
-    private bool IsReversible => ReferenceEquals(_out, _in);
+    internal ArcTable Out => _out;
+
+    internal ArcTable In => _in;
+
+    internal ReadOnlySpan<int> InverseLabel => _inverseLabel;
+
+    internal bool IsReversible => ReferenceEquals(_out, _in);
 
     internal int Place(int shape)
     {
@@ -115,10 +121,12 @@ public sealed partial class RegionGraph
         return arcs.Build();
     }
 
+    private Arrow ArrowOf(int source, int arc) => ArrowWith(source, _out.Labels[arc]);
+
     // A label is the number of a step with its permutation, but at this shape another step with it may be the free one.
-    private Arrow ArrowOf(int source, int arc)
+    internal Arrow ArrowWith(int source, int label)
     {
-        var permutation = Groupoid.Mechanism.Steps[_out.Labels[arc]].Permutation;
+        var permutation = Groupoid.Mechanism.Steps[label].Permutation;
         foreach (var step in Groupoid.Mechanism.Steps)
         {
             if (step.Permutation == permutation && Groupoid.Target(_shapes[source], step.Index) is >= 0 and var target)
