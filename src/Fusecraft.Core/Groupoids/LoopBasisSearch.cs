@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using System.Diagnostics;
 using System.Numerics;
 using Fusecraft.Groups;
 using Fusecraft.Mechanisms;
@@ -78,6 +79,11 @@ internal sealed class LoopBasisSearch<T>
         meetings.AddBack(0, _root);
         for (var half = 1; !IsDone; half++)
         {
+            if (_ahead.IsExhausted && _behind.IsExhausted)
+            {
+                throw new UnreachableException("All loops together do not generate the vertex group.");
+            }
+
             if (!_ahead.TryGrow(_maxStates, _cancellation))
             {
                 return (2 * half) - 2;
@@ -215,11 +221,7 @@ internal sealed class LoopBasisSearch<T>
         _kept.Add(loop);
     }
 
-    private void Load(Permutation permutation)
-    {
-        Lanes.Identity<T>(_loop);
-        permutation.CopyLanes(_loop.AsSpan());
-    }
+    private void Load(Permutation permutation) => permutation.CopyLanes(_loop.AsSpan());
 
     private void DropSuperfluous()
     {

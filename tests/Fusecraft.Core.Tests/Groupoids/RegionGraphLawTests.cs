@@ -55,7 +55,6 @@ public class RegionGraphLawTests
                 Count("bridges where every step can be undone", isReversible && !bridges.IsEmpty);
                 Count("bridges that can be undone beside one-way steps", !isReversible && bridges.Any(bridge => bridge.Back is not null));
                 Count("bridges that cannot be undone", bridges.Any(bridge => bridge.Back is null));
-                Count("cut shapes where every step can be undone", isReversible && !cutShapes.IsEmpty);
                 Count("cut shapes beside one-way steps", !isReversible && !cutShapes.IsEmpty);
                 Count("several shapes and no cut shape", region.ShapeCount > 3 && cutShapes.IsEmpty);
                 Count("shapes without a loop", loops.Contains(-1));
@@ -112,13 +111,14 @@ public class RegionGraphLawTests
         {
             var groupoid = graph.Groupoid;
             var distances = Enumerable.Range(0, naive.Vertices).Select(vertex => naive.DistancesFrom(vertex)).ToArray();
+            var back = groupoid.DistancesBack();
             var eccentricities = Array.ConvertAll(distances, from => from.Max());
             for (var i = 0; i < distances.Length; i++)
             {
                 Assert.Equal(distances[i], graph.DistancesFrom(graph.Shapes[i]));
                 Assert.Equal(distances.Select(from => from[i]), graph.DistancesTo(graph.Shapes[i]));
                 Assert.Equal(eccentricities[i], graph.Eccentricity(graph.Shapes[i]));
-                Assert.Equal(graph.Region.Index == 0 ? distances[i][0] : -1, groupoid.DistancesBack()[graph.Shapes[i]]);
+                Assert.Equal(graph.Region.Index == 0 ? distances[i][0] : -1, back[graph.Shapes[i]]);
             }
 
             Assert.Equal(naive.Arrows.Count(), graph.ArrowCount);

@@ -6,6 +6,7 @@ namespace Fusecraft.Tests.Support;
 internal sealed class NaiveGraph
 {
     private readonly HashSet<(int From, int To, string What, string Undo)> _arrows = [];
+    private ILookup<int, (int From, int To, string What, string Undo)>? _from;
 
     public NaiveGraph(int vertices) => Vertices = vertices;
 
@@ -34,24 +35,30 @@ internal sealed class NaiveGraph
         static string Name(NaiveMechanism mechanism, NaiveStep step) => string.Join(' ', mechanism.Sites.Select(step.Image));
     }
 
-    public void Add(int from, int to, string what, string undo) => _arrows.Add((from, to, what, undo));
+    public void Add(int from, int to, string what, string undo)
+    {
+        _arrows.Add((from, to, what, undo));
+        _from = null;
+    }
 
     /// <summary>Distances from a vertex, -1 where there is no way.</summary>
     public int[] DistancesFrom(int vertex, Func<int, bool>? mayPass = null)
     {
         var distances = Enumerable.Repeat(-1, Vertices).ToArray();
         distances[vertex] = 0;
-        for (var (distance, grew) = (0, true); grew; distance++)
+        for (List<int> level = [vertex]; level.Count > 0;)
         {
-            grew = false;
-            foreach (var (from, to, _, _) in _arrows)
+            var next = new List<int>();
+            foreach (var (from, to, _, _) in level.SelectMany(at => From(at)))
             {
-                if (distances[from] == distance && distances[to] < 0 && (mayPass is null || mayPass(to)))
+                if (distances[to] < 0 && (mayPass is null || mayPass(to)))
                 {
-                    distances[to] = distance + 1;
-                    grew = true;
+                    distances[to] = distances[from] + 1;
+                    next.Add(to);
                 }
             }
+
+            level = next;
         }
 
         return distances;
@@ -91,7 +98,7 @@ internal sealed class NaiveGraph
     /// <summary>The length of a shortest walk from a vertex back to it in which no arrow undoes the one before; -1 where there is none. Walks over arrows, not over vertices.</summary>
     public int ShortestReducedLoop(int vertex)
     {
-        var level = _arrows.Where(arrow => arrow.From == vertex).ToHashSet();
+        var level = From(vertex).ToHashSet();
         var seen = level.ToHashSet();
         for (var length = 1; level.Count > 0; length++)
         {
@@ -100,9 +107,11 @@ internal sealed class NaiveGraph
                 return length;
             }
 
-            level = [.. level.SelectMany(last => _arrows.Where(next => next.From == last.To && (next.To != last.From || next.What != last.Undo))).Where(seen.Add)];
+            level = [.. level.SelectMany(last => From(last.To).Where(next => (next.To != last.From || next.What != last.Undo))).Where(seen.Add)];
         }
 
         return -1;
     }
+
+    private IEnumerable<(int From, int To, string What, string Undo)> From(int vertex) => (_from ??= _arrows.ToLookup(arrow => arrow.From))[vertex];
 }
