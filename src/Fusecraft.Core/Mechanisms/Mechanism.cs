@@ -16,6 +16,7 @@ public sealed partial class Mechanism
     private readonly Lazy<PermutationGroup> _unguardedGroup;
     private readonly Lazy<StepNames> _stepNames;
     private readonly Lazy<SiteMover> _siteMover;
+    private readonly Lazy<ImmutableArray<Permutation>> _builtSymmetries;
 
     internal Mechanism(
         MechanismDefinition definition,
@@ -30,6 +31,7 @@ public sealed partial class Mechanism
         Definition = definition;
         PieceOfSite = blueprint.PieceOfSite;
         Adjacency = blueprint.Adjacency;
+        _builtSymmetries = new Lazy<ImmutableArray<Permutation>>(() => blueprint.Symmetries?.Invoke() ?? []);
         ColourOfSite = colours;
         HomeBlocks = [.. blocks.Select(block => block.ToImmutableArray())];
         MarkNames = [.. marks.Select(mark => mark.Mark).Distinct()];
@@ -128,6 +130,9 @@ public sealed partial class Mechanism
     internal StepNames StepNames => _stepNames.Value;
 
     internal SiteMover SiteMover => _siteMover.Value;
+
+    /// <summary>The symmetries that whoever built the mechanism knows of, as permutations of the sites, the identity first; empty where it came without. Not all need take turns to turns.</summary>
+    internal ImmutableArray<Permutation> BuiltSymmetries => _builtSymmetries.Value;
 
     /// <summary>Makes a mechanism from its definition.</summary>
     /// <exception cref="MechanismFormatException">The definition has mistakes; all of them are listed.</exception>

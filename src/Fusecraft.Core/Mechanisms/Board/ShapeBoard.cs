@@ -8,7 +8,7 @@ namespace Fusecraft.Mechanisms;
 /// The one representation all constraints reduce to. A slot is a place for one token: a bond between two pieces, or a mark on a site. A shape is a bitset over the slots that home's
 /// tokens can ever reach when guards are ignored and nothing is torn.
 /// </summary>
-internal sealed class ShapeBoard
+internal sealed partial class ShapeBoard
 {
     private readonly Mechanism _mechanism;
     private readonly List<Slot> _slots = [];

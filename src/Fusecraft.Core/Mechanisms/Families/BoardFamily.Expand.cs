@@ -42,6 +42,6 @@ public sealed partial class BoardFamily
             }
         }
 
-        return SlidingEdge.ToBlueprint(Blueprint.NumberedNames(Columns * Rows), edges, Gaps, problems);
+        return SlidingEdge.ToBlueprint(Blueprint.NumberedNames(Columns * Rows), edges, Gaps, problems, Symmetries);
     }
 }

@@ -34,7 +34,7 @@ public sealed partial class CubeFamily
     }
 
     /// <summary>The numbering of one cube: which sites and pieces there are and where a turn takes them.</summary>
-    private sealed class Layout
+    private sealed partial class Layout
     {
         private readonly int _size;
         private readonly List<(int X, int Y, int Z)> _cells = [];
@@ -100,6 +100,7 @@ public sealed partial class CubeFamily
                 PieceNames = [.. pieceNames],
                 PieceAlias = FindPiece,
                 Adjacency = Adjacency(),
+                Symmetries = Symmetries,
                 Faces = [.. _sites.Select(site => site.Face)],
                 Turns = [.. Turns()],
             };

@@ -13,7 +13,8 @@ internal sealed record SlidingEdge(int A, int B, string Name, string As, string 
 {
     private const string Gap = "gap";
 
-    public static Blueprint? ToBlueprint(ImmutableArray<string> names, List<SlidingEdge> edges, ImmutableArray<string> gapNames, ProblemList problems)
+    public static Blueprint? ToBlueprint(
+        ImmutableArray<string> names, List<SlidingEdge> edges, ImmutableArray<string> gapNames, ProblemList problems, Func<ImmutableArray<Permutation>>? symmetries = null)
     {
         var numberOf = Enumerable.Range(0, names.Length).ToDictionary(i => names[i]);
         var gaps = new List<int>();
@@ -45,6 +46,7 @@ internal sealed record SlidingEdge(int A, int B, string Name, string As, string 
             SiteNames = names,
             PieceOfSite = [.. Enumerable.Range(0, names.Length)],
             PieceNames = names,
+            Symmetries = symmetries,
             Turns = [.. edges.Select(edge => edge.ToTurn(names, severalGaps && edge.As != edge.Name))],
             Marks = [.. gaps.Select(gap => (Gap, gap))],
         };
