@@ -42,18 +42,24 @@ public sealed class LoopBasis
     /// <param name="options">How far to look; null for the usual.</param>
     /// <param name="cancellationToken">Ends the work early.</param>
     /// <exception cref="ArgumentOutOfRangeException">The budget is below 1.</exception>
+    /// <exception cref="ArgumentException">The symmetries are those of another mechanism.</exception>
     /// <exception cref="OperationCanceledException">The token asked for it.</exception>
     /// <remarks>
     /// Writes out the arrows of the region (see <see cref="ShapeGroupoid.GraphOf"/>) and searches states from the base shape both ways: every loop is a path out and a path back of at most half its length.
     /// </remarks>
-    public static LoopBasis Of(VertexGroup group, LoopBasisOptions? options = null, CancellationToken cancellationToken = default) => Of(group, [], options, cancellationToken);
-
-    internal static LoopBasis Of(VertexGroup group, IReadOnlyList<LoopSymmetry> symmetries, LoopBasisOptions? options, CancellationToken cancellationToken)
+    public static LoopBasis Of(VertexGroup group, LoopBasisOptions? options = null, CancellationToken cancellationToken = default)
     {
         ArgumentNullException.ThrowIfNull(group);
         options ??= LoopBasisOptions.Default;
         ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxStates, 1, nameof(options));
-        return group.Groupoid.Mechanism.SiteCount <= 256
+        var mechanism = group.Groupoid.Mechanism;
+        if (options.Symmetries is { } given && !ReferenceEquals(given.Mechanism, mechanism))
+        {
+            throw new ArgumentException($"The symmetries are those of another mechanism than {mechanism.Name}.", nameof(options));
+        }
+
+        var symmetries = (options.Symmetries ?? SymmetryGroup.Of(mechanism, cancellationToken)).Fixing(group.Groupoid.ShapeAt(group.BaseShape), cancellationToken);
+        return mechanism.SiteCount <= 256
             ? new LoopBasisSearch<byte>(group, symmetries, options.MaxStates, cancellationToken).Run()
             : new LoopBasisSearch<ushort>(group, symmetries, options.MaxStates, cancellationToken).Run();
     }

@@ -14,10 +14,13 @@ namespace Fusecraft.Groupoids;
 internal sealed class LoopBasisSearch<T>
     where T : unmanaged, IBinaryInteger<T>
 {
+    /// <summary>So many copies of one loop are looked at.</summary>
+    private const int MaxCopies = 10_000;
+
     /// <summary>States held at most, times the lanes of each.</summary>
     private const int MaxLanes = 1 << 29;
     private readonly VertexGroup _group;
-    private readonly IReadOnlyList<LoopSymmetry> _symmetries;
+    private readonly ImmutableArray<MechanismSymmetry> _symmetries;
     private readonly CancellationToken _cancellation;
     private readonly int _maxStates;
     private readonly RegionGraph _graph;
@@ -31,10 +34,10 @@ internal sealed class LoopBasisSearch<T>
     private readonly T[] _inverse;
     private readonly T[] _loop;
 
-    public LoopBasisSearch(VertexGroup group, IReadOnlyList<LoopSymmetry> symmetries, int maxStates, CancellationToken cancellation)
+    public LoopBasisSearch(VertexGroup group, SymmetryGroup symmetries, int maxStates, CancellationToken cancellation)
     {
         _group = group;
-        _symmetries = symmetries;
+        _symmetries = symmetries.Generators;
         _cancellation = cancellation;
         _graph = group.Groupoid.GraphOf(group.Region.Index, null, cancellation);
         _root = _graph.Place(group.BaseShape);
@@ -197,18 +200,26 @@ internal sealed class LoopBasisSearch<T>
         return !_builder.Contains(_loop);
     }
 
-    // Keeps a loop, and those of its rotated copies that the ones kept do not generate; they are as long.
+    // Keeps a loop, and those of its copies under symmetries that the ones kept do not generate; they are as long.
     private void Keep(List<Step> steps)
     {
         var shape = _group.Groupoid.ShapeAt(_group.BaseShape);
-        Add(TurnPath.Follow(shape, steps));
-        foreach (var symmetry in _symmetries)
+        var copies = new List<TurnPath> { TurnPath.Follow(shape, steps) };
+        var seen = new HashSet<Permutation> { copies[0].Permutation };
+        for (var i = 0; i < copies.Count && !IsDone; i++)
         {
-            var copy = TurnPath.Follow(shape, steps.Select(step => _group.Groupoid.Mechanism.Steps[symmetry.Steps[step.Index]]));
-            Load(copy.Permutation);
-            if (!IsDone && IsNew())
+            Load(copies[i].Permutation);
+            if (IsNew())
             {
-                Add(copy);
+                Add(copies[i]);
+            }
+
+            foreach (var symmetry in _symmetries)
+            {
+                if (copies.Count < MaxCopies && seen.Add(copies[i].Permutation.ConjugateBy(symmetry.Sites)))
+                {
+                    copies.Add(TurnPath.Follow(shape, copies[i].Steps.Select(symmetry.Image)));
+                }
             }
         }
     }
@@ -240,18 +251,37 @@ internal sealed class LoopBasisSearch<T>
         var families = new List<(List<BasisLoop> Loops, HashSet<Permutation> Copies)>();
         foreach (var loop in loops)
         {
-            var family = families.Find(family => family.Copies.Contains(loop.Permutation));
-            if (family.Loops is null)
+            var at = families.FindIndex(family => family.Copies.Contains(loop.Permutation));
+            if (at < 0)
             {
-                var copies = _symmetries.Select(symmetry => loop.Permutation.ConjugateBy(symmetry.Sites)).Append(loop.Permutation).ToHashSet();
-                copies.UnionWith([.. copies.Select(copy => copy.Inverse())]);
-                families.Add(family = ([], copies));
+                at = families.Count;
+                families.Add(([], Copies(loop.Permutation)));
             }
 
-            family.Loops.Add(loop);
+            families[at].Loops.Add(loop);
         }
 
-        return [.. families.Select(family => new LoopFamily([.. family.Loops], family.Copies.Sum(copy => copy == copy.Inverse() ? 2 : 1) / 2))];
+        return [.. families.Select(family => new LoopFamily([.. family.Loops], family.Copies.Count < MaxCopies ? family.Copies.Sum(copy => copy == copy.Inverse() ? 2 : 1) / 2 : null))];
+    }
+
+    // The images of a permutation and of its inverse under the symmetries.
+    private HashSet<Permutation> Copies(Permutation permutation)
+    {
+        var queue = new Queue<Permutation>([permutation, permutation.Inverse()]);
+        HashSet<Permutation> copies = [.. queue];
+        while (copies.Count < MaxCopies && queue.TryDequeue(out var copy))
+        {
+            foreach (var symmetry in _symmetries)
+            {
+                var image = copy.ConjugateBy(symmetry.Sites);
+                if (copies.Add(image))
+                {
+                    queue.Enqueue(image);
+                }
+            }
+        }
+
+        return copies;
     }
 
     private Step StepAt(int vertex, int label) => _graph.ArrowWith(vertex, label).Step;

@@ -22,7 +22,7 @@ public sealed partial class RegionGraph
     public int Eccentricity(int shape) => _out.Search(Place(shape), new int[_shapes.Length], new int[_shapes.Length], out _);
 
     /// <summary>The largest distance from one shape of the region to another: exact where the budget of work suffices, else between bounds.</summary>
-    /// <param name="options">How much work it may take; null for a few seconds' work.</param>
+    /// <param name="options">How much work it may take; null for some seconds' work.</param>
     /// <param name="progress">Told after each search what is known.</param>
     /// <param name="cancellationToken">Ends the work early.</param>
     /// <exception cref="ArgumentOutOfRangeException">The budget is negative.</exception>
