@@ -104,6 +104,46 @@ public class RegionGraphTests
         Assert.Equal([2, 2], graph.ShortestLoops().ToArray());
     }
 
+    // Shapes and arrows of fused cubes are own figures of independent programs (see FusedCubeTests).
+    [Theory]
+    [InlineData(24, 240, "UFR UF")]
+    [InlineData(4, 40, "UF U")]
+    [InlineData(1, 6, "DBL DB DL BL D B L core")]
+    [InlineData(1, 4, "DBL DL DFL BL L FL DB D DF B core F")]
+    [InlineData(240, 1992, "UFR UF", "DBL DB")]
+    public void Profiles_of_fused_cubes_add_up(int shapes, int arrows, params string[] blocks)
+    {
+        var groupoid = ShapeGroupoid.Explore(Make.Cube(3, "", blocks));
+        var branching = groupoid.BranchingProfile();
+        Assert.Equal(shapes, branching.Sum());
+        Assert.Equal(arrows, branching.Select((count, free) => count * free).Sum());
+        Assert.Equal(shapes, groupoid.DepthProfile().Sum());
+        Assert.Equal(arrows, groupoid.GraphOf(0).ArrowCount);
+
+        // Every quarter turn can be undone, so it is as far back as there.
+        Assert.Equal(Enumerable.Range(0, shapes).Select(groupoid.DistanceOf), groupoid.DistancesBack());
+        Assert.Equal(groupoid.DepthProfile().Length - 1, groupoid.GraphOf(0).Eccentricity(0));
+    }
+
+    // Own figures, computed with this library, for regression; the numbers of shapes and dead ends are told in the files.
+    [Theory]
+    [InlineData("ferry-board", 5, 0, 0, 0)]
+    [InlineData("flood-tower", 8, 0, 0, 0)]
+    [InlineData("lock-basin", 7, 7, 6, 0)]
+    [InlineData("mill-race", 6, 5, 6, 0)]
+    [InlineData("seven-piers", 3, 0, 0, 0)]
+    [InlineData("weir-gate", 13, 0, 8, 284)]
+    public void Home_regions_of_the_workshop_have_these_figures(string puzzle, int diameter, int bridges, int cutShapes, int deadEnds)
+    {
+        var groupoid = ShapeGroupoid.Explore(MechanismFile.Load(Repository.PathOf($"docs/workshop/{puzzle}.fuse.json")));
+        var graph = groupoid.GraphOf(0);
+        Assert.Equal((diameter, diameter), (graph.Diameter().Lower, graph.Diameter().Upper));
+        Assert.Equal(bridges, graph.Bridges().Length);
+        Assert.Equal(cutShapes, graph.CutShapes().Length);
+        Assert.Equal(deadEnds, groupoid.DeadEnds().Length);
+        Assert.Empty(groupoid.StuckShapes());
+    }
+
     [Fact]
     public void Random_undirected_graphs_are_cut_as_by_leaving_out()
     {
