@@ -14,13 +14,13 @@ public sealed partial class RegionGraph
     /// </remarks>
     public ImmutableArray<Bridge> Bridges(CancellationToken cancellationToken = default)
     {
-        var arcs = IsReversible ? LowPoints.Find(_out, cancellationToken).Bridges : StrongBridges(cancellationToken);
+        var arcs = IsReversible ? LowPoints.Find(Out, cancellationToken).Bridges : StrongBridges(cancellationToken);
         var bridges = new List<Bridge>();
         foreach (var (from, arc) in arcs)
         {
             var back = UndoingArc(arc);
             var there = ArrowOf(from, arc);
-            Arrow? undoing = back < 0 ? null : ArrowOf(_out.Ends[arc], back);
+            Arrow? undoing = back < 0 ? null : ArrowOf(Out.Ends[arc], back);
             bridges.Add(undoing is { } other && other.Source < there.Source ? new Bridge(other, there) : new Bridge(there, undoing));
         }
 
@@ -35,12 +35,12 @@ public sealed partial class RegionGraph
     {
         if (IsReversible)
         {
-            return [.. LowPoints.Find(_out, cancellationToken).CutVertices.Select(vertex => _shapes[vertex])];
+            return [.. LowPoints.Find(Out, cancellationToken).CutVertices.Select(vertex => _shapes[vertex])];
         }
 
         var isCut = new bool[_shapes.Length];
         isCut[0] = !HoldsWithoutFirst();
-        foreach (var tree in (DominatorTree[])[new(0, _out, _in, cancellationToken), new(0, _in, _out, cancellationToken)])
+        foreach (var tree in (DominatorTree[])[new(0, Out, In, cancellationToken), new(0, In, Out, cancellationToken)])
         {
             for (var vertex = 1; vertex < isCut.Length; vertex++)
             {
@@ -57,20 +57,20 @@ public sealed partial class RegionGraph
     /// <exception cref="ArgumentOutOfRangeException">The region has no such shape.</exception>
     /// <exception cref="OperationCanceledException">The token asked for it.</exception>
     /// <remarks>The dominators of the reversed graph. Source: T. Lengauer, R. E. Tarjan, <em>A fast algorithm for finding dominators in a flowgraph</em>, ACM TOPLAS 1 (1979) (not opened, method from memory).</remarks>
-    public GateTree GatesTo(int target, CancellationToken cancellationToken = default) => new(this, new DominatorTree(Place(target), _in, _out, cancellationToken));
+    public GateTree GatesTo(int target, CancellationToken cancellationToken = default) => new(this, new DominatorTree(Place(target), In, Out, cancellationToken));
 
     private List<(int From, int Arc)> StrongBridges(CancellationToken cancellation)
     {
         var bridges = new List<(int From, int Arc)>();
-        var there = new DominatorTree(0, _out, _in, cancellation);
-        foreach (var (to, arc) in OnlyWaysIn(there, _in))
+        var there = new DominatorTree(0, Out, In, cancellation);
+        foreach (var (to, arc) in OnlyWaysIn(there, In))
         {
-            bridges.Add((_in.Ends[arc], ArcWith(_in.Ends[arc], _in.Labels[arc])));
-            System.Diagnostics.Debug.Assert(_out.Ends[bridges[^1].Arc] == to, "An arc is the same seen from both ends.");
+            bridges.Add((In.Ends[arc], ArcWith(In.Ends[arc], In.Labels[arc])));
+            System.Diagnostics.Debug.Assert(Out.Ends[bridges[^1].Arc] == to, "An arc is the same seen from both ends.");
         }
 
-        var back = new DominatorTree(0, _in, _out, cancellation);
-        bridges.AddRange(OnlyWaysIn(back, _out));
+        var back = new DominatorTree(0, In, Out, cancellation);
+        bridges.AddRange(OnlyWaysIn(back, Out));
         return bridges;
     }
 
@@ -97,8 +97,8 @@ public sealed partial class RegionGraph
 
     private int ArcWith(int vertex, int label)
     {
-        var arc = _out.Start(vertex);
-        while (_out.Labels[arc] != label)
+        var arc = Out.Start(vertex);
+        while (Out.Labels[arc] != label)
         {
             arc++;
         }
@@ -106,7 +106,7 @@ public sealed partial class RegionGraph
         return arc;
     }
 
-    private bool HoldsWithoutFirst() => _shapes.Length < 3 || (ReachesAllWithoutFirst(_out) && ReachesAllWithoutFirst(_in));
+    private bool HoldsWithoutFirst() => _shapes.Length < 3 || (ReachesAllWithoutFirst(Out) && ReachesAllWithoutFirst(In));
 
     private static bool ReachesAllWithoutFirst(ArcTable arcs)
     {

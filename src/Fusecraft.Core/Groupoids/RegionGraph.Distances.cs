@@ -9,17 +9,17 @@ public sealed partial class RegionGraph
     /// <summary>The smallest number of steps from a shape to each shape of the region, in the order of <see cref="Shapes"/>.</summary>
     /// <exception cref="ArgumentOutOfRangeException">The region has no such shape.</exception>
     /// <remarks>Linear in the number of arrows.</remarks>
-    public ImmutableArray<int> DistancesFrom(int shape) => Distances(_out, Place(shape));
+    public ImmutableArray<int> DistancesFrom(int shape) => Distances(Out, Place(shape));
 
     /// <summary>The smallest number of steps to a shape from each shape of the region, in the order of <see cref="Shapes"/>.</summary>
     /// <exception cref="ArgumentOutOfRangeException">The region has no such shape.</exception>
     /// <remarks>Linear in the number of arrows.</remarks>
-    public ImmutableArray<int> DistancesTo(int shape) => Distances(_in, Place(shape));
+    public ImmutableArray<int> DistancesTo(int shape) => Distances(In, Place(shape));
 
     /// <summary>The largest number of steps that a shape of the region may need to be reached from a given one.</summary>
     /// <exception cref="ArgumentOutOfRangeException">The region has no such shape.</exception>
     /// <remarks>Linear in the number of arrows.</remarks>
-    public int Eccentricity(int shape) => _out.Search(Place(shape), new int[_shapes.Length], new int[_shapes.Length], out _);
+    public int Eccentricity(int shape) => Out.Search(Place(shape), new int[_shapes.Length], new int[_shapes.Length], out _);
 
     /// <summary>The largest distance from one shape of the region to another: exact where the budget of work suffices, else between bounds.</summary>
     /// <param name="options">How much work it may take; null for some seconds' work.</param>
@@ -36,7 +36,7 @@ public sealed partial class RegionGraph
     {
         options ??= DiameterOptions.Default;
         ArgumentOutOfRangeException.ThrowIfNegative(options.MaxArrowsSeen, nameof(options));
-        var found = new DiameterSearch(_out, _in, options.MaxArrowsSeen, progress is null ? null : bounds => progress.Report(InNumbers(bounds)), cancellationToken).Run();
+        var found = new DiameterSearch(Out, In, options.MaxArrowsSeen, progress is null ? null : bounds => progress.Report(InNumbers(bounds)), cancellationToken).Run();
         return InNumbers(found);
     }
 

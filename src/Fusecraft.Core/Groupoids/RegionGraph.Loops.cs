@@ -24,7 +24,7 @@ public sealed partial class RegionGraph
         }
         else
         {
-            var search = new ReducedLoopSearch(_out, _in, _inverseLabel);
+            var search = new ReducedLoopSearch(Out, In, _inverseLabel);
             for (var vertex = 0; vertex < lengths.Length; vertex++)
             {
                 if (vertex % ProgressInterval == 0)
@@ -43,7 +43,7 @@ public sealed partial class RegionGraph
 
     /// <summary>The number of steps of the shortest loop at a shape, as <see cref="ShortestLoops"/> counts it; -1 where there is none.</summary>
     /// <exception cref="ArgumentOutOfRangeException">The region has no such shape.</exception>
-    public int ShortestLoopAt(int shape) => new ReducedLoopSearch(_out, _in, _inverseLabel).LengthAt(Place(shape));
+    public int ShortestLoopAt(int shape) => new ReducedLoopSearch(Out, In, _inverseLabel).LengthAt(Place(shape));
 
     // Connected with two arcs for each edge, one edge fewer than vertices.
     private bool IsTree() => IsReversible && ArrowCount == 2L * (_shapes.Length - 1);

@@ -19,10 +19,6 @@ public sealed partial class RegionGraph
     private readonly RegionMembers _members;
     private readonly int[] _shapes;
 
-    /// <summary>The arcs by their sources, and by their targets. Where every step can be undone this is one table: each arc seen from its end is its undoing.</summary>
-    private readonly ArcTable _out;
-    private readonly ArcTable _in;
-
     /// <summary>For each label the label of the inverse permutation, or -1.</summary>
     private readonly int[] _inverseLabel;
 
@@ -34,8 +30,8 @@ public sealed partial class RegionGraph
         _shapes = members.Of(region.Index);
         var labels = LabelsOfSteps(groupoid.Mechanism);
         _inverseLabel = InverseLabels(groupoid.Mechanism, labels);
-        _out = WriteArcs(labels, progress, cancellation);
-        _in = groupoid.Mechanism.IsReversible ? _out : _out.Reversed();
+        Out = WriteArcs(labels, progress, cancellation);
+        In = groupoid.Mechanism.IsReversible ? Out : Out.Reversed();
     }
 
     /// <summary>The groupoid.</summary>
@@ -48,15 +44,17 @@ public sealed partial class RegionGraph
     public ImmutableArray<int> Shapes => ImmutableCollectionsMarshal.AsImmutableArray(_shapes);
 
     /// <summary>The number of arrows within the region.</summary>
-    public long ArrowCount => _out.ArcCount;
+    public long ArrowCount => Out.ArcCount;
 
-    internal ArcTable Out => _out;
+    /// <summary>The arcs by their sources.</summary>
+    internal ArcTable Out { get; }
 
-    internal ArcTable In => _in;
+    /// <summary>The arcs by their targets. Where every step can be undone this is the same table: each arc seen from its end is its undoing.</summary>
+    internal ArcTable In { get; }
 
     internal ReadOnlySpan<int> InverseLabel => _inverseLabel;
 
-    internal bool IsReversible => ReferenceEquals(_out, _in);
+    internal bool IsReversible => ReferenceEquals(Out, In);
 
     internal int Place(int shape)
     {
@@ -121,7 +119,7 @@ public sealed partial class RegionGraph
         return arcs.Build();
     }
 
-    private Arrow ArrowOf(int source, int arc) => ArrowWith(source, _out.Labels[arc]);
+    private Arrow ArrowOf(int source, int arc) => ArrowWith(source, Out.Labels[arc]);
 
     // A label is the number of a step with its permutation, but at this shape another step with it may be the free one.
     internal Arrow ArrowWith(int source, int label)
@@ -141,10 +139,10 @@ public sealed partial class RegionGraph
     // The arc that undoes one, or -1.
     private int UndoingArc(int arc)
     {
-        var (end, label) = (_out.Ends[arc], _inverseLabel[_out.Labels[arc]]);
-        for (var back = _out.Start(end); back < _out.Start(end + 1); back++)
+        var (end, label) = (Out.Ends[arc], _inverseLabel[Out.Labels[arc]]);
+        for (var back = Out.Start(end); back < Out.Start(end + 1); back++)
         {
-            if (_out.Labels[back] == label)
+            if (Out.Labels[back] == label)
             {
                 return back;
             }
