@@ -75,6 +75,23 @@ public class SymmetryGroupTests
         Assert.True(SymmetryGroup.Of(cube).Sites.IsSubgroupOf(SymmetryGroup.Find(cube).Sites));
     }
 
+    // Elementary: orbit and stabilizer of the gap on a 3x3 board, whose square has eight symmetries.
+    [Theory]
+    [InlineData("5", 8)]
+    [InlineData("1", 2)]
+    [InlineData("2", 2)]
+    public void The_symmetries_that_fix_a_shape_are_those_that_fix_its_gap(string gap, int count)
+    {
+        var board = Make.Board(3, 3);
+        var groupoid = ShapeGroupoid.Explore(board);
+        var shape = Enumerable.Range(0, 9).Select(groupoid.ShapeAt).Single(shape => board.SiteNames[shape.Marks.Single().Site] == gap);
+        var fixing = SymmetryGroup.Of(board).Fixing(shape);
+
+        Assert.Equal(count, fixing.Order);
+        Assert.All(fixing.Members(), member => Assert.Equal(shape, member.Image(shape)));
+        Assert.Throws<ArgumentException>("kept", () => fixing.Fixing(Make.Board(3, 3).Home));
+    }
+
     [Fact]
     public void Symmetries_take_arrows_to_arrows()
     {

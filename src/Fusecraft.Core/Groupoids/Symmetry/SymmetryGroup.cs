@@ -110,11 +110,25 @@ public sealed class SymmetryGroup
     /// <param name="cancellationToken">Ends the work early.</param>
     /// <remarks>Takes time and memory for all images of the home shape. Generators by Schreier's lemma.</remarks>
     /// <exception cref="OperationCanceledException">The token asked for it.</exception>
-    public SymmetryGroup FixingHome(CancellationToken cancellationToken = default)
+    public SymmetryGroup FixingHome(CancellationToken cancellationToken = default) => Fixing(Mechanism.Home, cancellationToken);
+
+    /// <summary>The symmetries that take a shape to itself: every block to a block and every mark to a mark of that name.</summary>
+    /// <param name="kept">A shape of the mechanism.</param>
+    /// <param name="cancellationToken">Ends the work early.</param>
+    /// <remarks>Takes time and memory for all images of the shape. Generators by Schreier's lemma.</remarks>
+    /// <exception cref="ArgumentException">The shape belongs to another mechanism.</exception>
+    /// <exception cref="OperationCanceledException">The token asked for it.</exception>
+    public SymmetryGroup Fixing(Shape kept, CancellationToken cancellationToken = default)
     {
-        var home = PlacedShape.Of(Mechanism.Home);
-        var reached = new Dictionary<PlacedShape, Permutation> { [home] = Permutation.Identity };
-        var queue = new Queue<PlacedShape>([home]);
+        ArgumentNullException.ThrowIfNull(kept);
+        if (!ReferenceEquals(kept.Mechanism, Mechanism))
+        {
+            throw new ArgumentException($"The shape belongs to another mechanism than {Mechanism.Name}.", nameof(kept));
+        }
+
+        var first = PlacedShape.Of(kept);
+        var reached = new Dictionary<PlacedShape, Permutation> { [first] = Permutation.Identity };
+        var queue = new Queue<PlacedShape>([first]);
         var fixing = new HashSet<Permutation>();
         while (queue.TryDequeue(out var shape))
         {
