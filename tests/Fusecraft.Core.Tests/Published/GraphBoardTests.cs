@@ -182,7 +182,9 @@ public class GraphBoardTests
         {
             for (var shape = 1; shape < groupoid.ShapeCount; shape++)
             {
-                Conjugacy.Holds(home, groupoid.VertexGroupAt(shape));
+                var group = groupoid.VertexGroupAt(shape);
+                Conjugacy.Holds(home, group);
+                Assert.True(home.MovedTo(shape).Group.SameGroupAs(group.Group));
             }
         }
 
