@@ -108,7 +108,6 @@ public sealed partial class ExamineCommandTests : IDisposable
             plain.fuse.json  1  0  0  1  0  2^27·3^14·5^3·7^2·11  43,252,003,274,489,856,000
 
             The vertex group is given by its order, the farthest shape by its steps from home; states are those reachable from home.
-            A question mark stands for what is not known: --max-shapes ended the work, or there are several regions.
 
             """,
             Columns(outcome.Output));

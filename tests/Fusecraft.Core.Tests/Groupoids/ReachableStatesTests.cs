@@ -1,6 +1,7 @@
 using System.Numerics;
 using Fusecraft.Groupoids;
 using Fusecraft.Mechanisms;
+using Fusecraft.Permutations;
 using Fusecraft.Tests.Support;
 
 namespace Fusecraft.Tests.Groupoids;
@@ -11,17 +12,21 @@ public class ReachableStatesTests
     [Fact]
     public void All_states_by_exhaustive_search_are_as_many_as_counted()
     {
-        var several = 0;
-        for (var seed = 0UL; seed < 300; seed++)
+        var (several, furtherOn) = (0, 0);
+        for (var seed = 0UL; several < 300; seed++)
         {
             var definition = RandomMechanisms.From(seed);
-            var naive = new NaiveMechanism(definition);
             var groupoid = ShapeGroupoid.Explore(Mechanism.Create(definition));
-            Assert.Equal((seed, naive.Arrangements([.. naive.Shapes().Keys]).Count), (seed, groupoid.CountReachableStates() ?? -1));
-            several += groupoid.Regions.Length > 1 ? 1 : 0;
+            if (groupoid.Regions.Length > 1)
+            {
+                several++;
+                furtherOn += groupoid.Regions.Count(region => !region.IsTrap) > 1 ? 1 : 0;
+                var naive = new NaiveMechanism(definition);
+                Assert.Equal((seed, naive.Arrangements([.. naive.Shapes().Keys]).Count), (seed, groupoid.CountReachableStates() ?? -1));
+            }
         }
 
-        Assert.True(several >= 50, $"only {several} have several regions");
+        Assert.True(furtherOn >= 50, $"only {furtherOn} have passages from other regions than home's");
     }
 
     // Each passage goes to the next region, where another part of the labels can be mixed: double cosets of groups that share points.
@@ -43,6 +48,50 @@ public class ReachableStatesTests
         var groupoid = ShapeGroupoid.Explore(Mechanism.Create(definition));
         Assert.Equal(3, groupoid.Regions.Length);
         Assert.Equal(naive.Arrangements([.. naive.Shapes().Keys]).Count, groupoid.CountReachableStates());
+    }
+
+    // A boat goes down through four stations, here and there with two ways; at each some turns of six labels are free. Every region is one shape, and all that matters is how the groups lie to each other.
+    [Fact]
+    public void Random_groups_one_after_the_other_are_counted_as_by_exhaustive_search()
+    {
+        for (var seed = 0UL; seed < 100; seed++)
+        {
+            var random = new SeededRandom(seed);
+            var builder = MechanismBuilder.Custom("Stations", 10);
+            for (var station = 7; station <= 10; station++)
+            {
+                var (here, turns) = ($"boat@{station}", random.NextInt32(3));
+                for (var i = 0; i < turns; i++)
+                {
+                    builder = builder.Turn($"T{station}x{i}", Some(random), turn => turn.Needs(here));
+                }
+
+                for (var next = station + 1; next <= 10; next++)
+                {
+                    for (var ways = random.NextInt32(3); ways > 0; ways--)
+                    {
+                        builder = builder.Turn($"P{station}x{next}x{ways}", $"({station} {next}){(random.NextInt32(3) == 0 ? "" : Some(random))}", turn => turn.Needs(here).OneWay());
+                    }
+                }
+            }
+
+            var definition = builder.Turn("Last", "(7 8)(1 2)", turn => turn.Needs("boat@7").OneWay()).Mark("boat", "7").Build().Definition;
+            var naive = new NaiveMechanism(definition);
+            var count = ShapeGroupoid.Explore(Mechanism.Create(definition)).CountReachableStates();
+            Assert.Equal((seed, naive.Arrangements([.. naive.Shapes().Keys]).Count), (seed, count ?? -1));
+        }
+
+        static string Some(SeededRandom random)
+        {
+            Permutation permutation;
+            do
+            {
+                permutation = random.NextPermutation(6);
+                permutation = random.NextInt32(2) == 0 ? permutation : permutation.Power(2);
+            }
+            while (permutation.IsIdentity);
+            return permutation.ToString();
+        }
     }
 
     // Counted by hand. H mixes places 1 … 15 before the passage, V places 8 … 22 after it; they share Sym(8 … 15), so the passage Plain brings 15!·15!/8! permutations. Early and Late differ from it by a
