@@ -91,6 +91,7 @@ internal sealed class ReachableStates
         var steps = _groupoid.Mechanism.Steps.Length;
         for (var shape = 0; shape < _groupoid.ShapeCount; shape++)
         {
+            _cancellation.ThrowIfCancellationRequested();
             var region = _groupoid.RegionOf(shape);
             for (var step = 0; step < steps; step++)
             {

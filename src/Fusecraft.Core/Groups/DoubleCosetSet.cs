@@ -52,7 +52,7 @@ internal sealed class DoubleCosetSet
 
         foreach (var wide in _wide)
         {
-            switch (wide.Contains(first))
+            switch (wide.Contains(first, _budget))
             {
                 case null:
                     return false;
@@ -70,7 +70,7 @@ internal sealed class DoubleCosetSet
             if (triesSearch && walk.Representatives.Count > ManyCosets)
             {
                 triesSearch = false;
-                if (WideDoubleCoset.TryMake(_larger, _smaller, first, _cancellation) is { } wide)
+                if (WideDoubleCoset.TryMake(_larger, _smaller, first, _budget, _cancellation) is { } wide)
                 {
                     _wide.Add(wide);
                     _listed.Add(first);

@@ -38,7 +38,6 @@ internal sealed class PartitionBacktrack
     private PointStructure _target;
     private PermutationGroup? _stabilizer;
     private int _start;
-    private long _trials;
 
     public PartitionBacktrack(ImmutableArray<PermutationGroup> groups, PointStructure source, CancellationToken cancellation)
     {
@@ -61,8 +60,11 @@ internal sealed class PartitionBacktrack
     /// <summary>So many images of base points are tried in one search; then it is given up.</summary>
     public long MaxTrials { get; init; } = long.MaxValue;
 
+    /// <summary>So many were tried in the last search.</summary>
+    public long Trials { get; private set; }
+
     /// <summary>True when the last search was given up: then what it returned means nothing, unless it found a member.</summary>
-    public bool IsExhausted => _trials >= MaxTrials;
+    public bool IsExhausted => Trials >= MaxTrials;
 
     /// <summary>The common members that carry the structure to itself.</summary>
     public PermutationGroup Stabilizer()
@@ -72,7 +74,7 @@ internal sealed class PartitionBacktrack
             return _stabilizer;
         }
 
-        _trials = 0;
+        Trials = 0;
         _target = _source;
         var generators = ImmutableArray.CreateBuilder<Permutation>();
         var order = BigInteger.One;
@@ -127,7 +129,7 @@ internal sealed class PartitionBacktrack
     // What holds of the members of a group along its chain holds of those of a coset too: each is a member followed by the representative.
     private Permutation? Find(ImmutableArray<Permutation> representatives)
     {
-        _trials = 0;
+        Trials = 0;
         Array.Clear(_cells[0]);
         for (var x = 0; x < _members.Length; x++)
         {
@@ -162,12 +164,12 @@ internal sealed class PartitionBacktrack
     private bool TryStep(int step, int image)
     {
         _cancellation.ThrowIfCancellationRequested();
-        if (_trials >= MaxTrials)
+        if (Trials >= MaxTrials)
         {
             return false;
         }
 
-        _trials++;
+        Trials++;
         _images[step] = image;
         _cells[step].CopyTo(_cells[step + 1], 0);
         for (var x = 0; x < _members.Length; x++)

@@ -23,19 +23,20 @@ internal sealed class WideDoubleCoset
     /// <summary>The number of its members.</summary>
     public BigInteger Size { get; }
 
-    /// <summary>The double coset, or null when its size takes too long to find.</summary>
-    public static WideDoubleCoset? TryMake(PermutationGroup a, PermutationGroup b, Permutation z, CancellationToken cancellation)
+    /// <summary>The double coset, or null when its size takes too long to find. Takes the trials from the budget, below zero if need be.</summary>
+    public static WideDoubleCoset? TryMake(PermutationGroup a, PermutationGroup b, Permutation z, CosetBudget budget, CancellationToken cancellation)
     {
         var moved = PermutationGroup.FromOrder([.. a.Generators.Select(generator => generator.ConjugateBy(z))], a.Degree, a.Order);
         var search = new PartitionBacktrack([b, moved], new PointStructure(new int[a.Degree]), cancellation) { MaxTrials = MaxTrials };
         var common = search.Stabilizer();
+        budget.TrySpend(search.Trials);
         return search.IsExhausted ? null : new WideDoubleCoset(z, search, a.Order * b.Order / common.Order);
     }
 
-    /// <summary>Whether a permutation is a member, or null when that takes too long to find.</summary>
-    public bool? Contains(Permutation w)
+    /// <summary>Whether a permutation is a member, or null when that takes longer to find than the budget allows.</summary>
+    public bool? Contains(Permutation w, CosetBudget budget)
     {
         var found = _search.FindInCosets(Permutation.Identity, _inverse * w);
-        return found is not null ? true : _search.IsExhausted ? null : false;
+        return !budget.TrySpend(_search.Trials) || (found is null && _search.IsExhausted) ? null : found is not null;
     }
 }

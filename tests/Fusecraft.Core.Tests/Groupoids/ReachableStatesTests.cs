@@ -140,6 +140,22 @@ public class ReachableStatesTests
         static string Places(int first, int last) => string.Join(' ', Enumerable.Range(first, last - first + 1));
     }
 
+    // Barges that only go forward and never pass each other: where they are says how they got there, so there is a state for each of the 16!/(8!·8!) shapes, and each is a region.
+    [Fact]
+    public void Thousands_of_regions_of_one_shape_are_counted()
+    {
+        var builder = MechanismBuilder.Custom("Convoy", 16);
+        for (var site = 1; site < 16; site++)
+        {
+            var (here, ahead) = ($"barge@{site}", $"barge@{site + 1}");
+            builder = builder.Turn($"T{site}", $"({site} {site + 1})", turn => turn.Needs(here).BarredBy(ahead).OneWay());
+        }
+
+        var groupoid = ShapeGroupoid.Explore(builder.Mark("barge", "1", "2", "3", "4", "5", "6", "7", "8").Build());
+        Assert.Equal(12870, groupoid.Regions.Length);
+        Assert.Equal(12870, groupoid.CountReachableStates());
+    }
+
     [Fact]
     public void One_region_has_as_many_states_as_its_vertex_group_says()
     {
