@@ -1,5 +1,6 @@
 using System.Numerics;
 using Fusecraft.Groups;
+using Fusecraft.Mechanisms;
 using Fusecraft.Permutations;
 
 namespace Fusecraft.Groupoids;
@@ -75,7 +76,7 @@ internal sealed class ReachableStates
             foreach (var (shape, step, target) in _leaving[region])
             {
                 var next = _groupoid.RegionOf(target);
-                _arriving[next].Add(new Arrival(region, loops.Label(shape) * _groupoid.Mechanism.Steps[step].Permutation, target));
+                _arriving[next].Add(new Arrival(region, loops.Label(shape) * step.Permutation, target));
                 if (--_expected[next] == 0)
                 {
                     ready.Enqueue(next);
@@ -88,14 +89,13 @@ internal sealed class ReachableStates
 
     private void ListPassages()
     {
-        var steps = _groupoid.Mechanism.Steps.Length;
         for (var shape = 0; shape < _groupoid.ShapeCount; shape++)
         {
             _cancellation.ThrowIfCancellationRequested();
             var region = _groupoid.RegionOf(shape);
-            for (var step = 0; step < steps; step++)
+            foreach (var step in _groupoid.Mechanism.Steps)
             {
-                if (_groupoid.Target(shape, step) is >= 0 and var target && _groupoid.RegionOf(target) is var next && next != region)
+                if (_groupoid.After(shape, step) is >= 0 and var target && _groupoid.RegionOf(target) is var next && next != region)
                 {
                     _leaving[region].Add(new Passage(shape, step, target));
                     _expected[next]++;
@@ -156,7 +156,7 @@ internal sealed class ReachableStates
     }
 
     /// <summary>A step that leaves its region.</summary>
-    private readonly record struct Passage(int Shape, int Step, int Target);
+    private readonly record struct Passage(int Shape, Step Step, int Target);
 
     /// <summary>A passage as its target's region sees it: the permutation of a path from the source region's first shape over it to the target.</summary>
     private readonly record struct Arrival(int Source, Permutation Permutation, int Target);

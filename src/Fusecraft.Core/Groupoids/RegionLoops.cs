@@ -37,7 +37,7 @@ internal sealed class RegionLoops
             cancellation.ThrowIfCancellationRequested();
             foreach (var step in groupoid.Mechanism.Steps)
             {
-                var target = groupoid.Target(shape, step.Index);
+                var target = groupoid.After(shape, step);
                 if (target < 0 || groupoid.RegionOf(target) != region.Index)
                 {
                     continue;
