@@ -51,7 +51,7 @@ internal sealed class ExaminationTable
         terminal.Out.WriteLine("The vertex group is given by its order, the farthest shape by its steps from home; states are those reachable from home.");
         if (_someUnknown)
         {
-            terminal.Out.WriteLine("A question mark stands for what is not known: --max-shapes ended the work, or there are several regions.");
+            terminal.Out.WriteLine("A question mark stands for what is not known: --max-shapes ended the work, or states of several regions would take too long to count.");
         }
     }
 

@@ -44,7 +44,7 @@ internal static class ExaminationText
 
         Section(output, "A state is where all the labels are.");
         Row(output, "states of the home region", $"{Wording.Number(home.StateCount)}, as many as its shapes times the order", "");
-        Row(output, "states reachable in all", examination.ReachableStateCount is { } states ? Wording.Number(states) : "not known: with several regions it is no simple product", "");
+        Row(output, "states reachable in all", examination.ReachableStateCount is { } states ? Wording.Number(states) : "not known: over several regions it would take too long to count them", "");
     }
 
     private static void WriteGroup(TextWriter output, VertexGroupFigures group)

@@ -56,13 +56,13 @@ public sealed partial class ExamineCommandTests : IDisposable
     }
 
     [Fact]
-    public async Task Several_regions_leave_the_number_of_all_states_unknown()
+    public async Task States_of_several_regions_are_counted_together()
     {
         var outcome = await _bench.RunAsync("examine", _bench.Write("canal.fuse.json", Files.Canal));
 
         Assert.Contains("  regions                     3\n", outcome.Output, StringComparison.Ordinal);
         Assert.Contains("  order                       1, proven\n  moved sites                 0        no label ever moves\n", outcome.Output, StringComparison.Ordinal);
-        Assert.EndsWith("  states reachable in all     not known: with several regions it is no simple product\n", outcome.Output, StringComparison.Ordinal);
+        Assert.EndsWith("  states reachable in all     4\n", outcome.Output, StringComparison.Ordinal);
         Assert.Equal(ExitCodes.Done, outcome.Code);
     }
 
@@ -90,7 +90,7 @@ public sealed partial class ExamineCommandTests : IDisposable
         Assert.Equal(BoardJson.TrimEnd(), lines[0]);
         using var canal = JsonDocument.Parse(lines[1]);
         Assert.Equal(3, canal.RootElement.GetProperty("regions").GetInt32());
-        Assert.Equal(JsonValueKind.Null, canal.RootElement.GetProperty("reachableStates").ValueKind);
+        Assert.Equal("4", canal.RootElement.GetProperty("reachableStates").GetString());
     }
 
     [Fact]
@@ -104,11 +104,10 @@ public sealed partial class ExamineCommandTests : IDisposable
             """
             file  shapes  dead ends  stuck  regions  farthest  vertex group  states
             board.fuse.json  6  0  0  1  3  2^2·3·5  360
-            canal.fuse.json  4  2  1  3  0  1  ?
+            canal.fuse.json  4  2  1  3  0  1  4
             plain.fuse.json  1  0  0  1  0  2^27·3^14·5^3·7^2·11  43,252,003,274,489,856,000
 
             The vertex group is given by its order, the farthest shape by its steps from home; states are those reachable from home.
-            A question mark stands for what is not known: --max-shapes ended the work, or there are several regions.
 
             """,
             Columns(outcome.Output));

@@ -10,15 +10,21 @@ namespace Fusecraft.Groupoids;
 /// to each other by the permutation of any path between them.
 /// </summary>
 /// <remarks>Immutable, safe to share.</remarks>
-public sealed class VertexGroup
+public sealed partial class VertexGroup
 {
     private readonly RegionTree _tree;
     private readonly ImmutableArray<Arc> _arcs;
 
     internal VertexGroup(ShapeGroupoid groupoid, RegionTree tree, PermutationGroup group, ImmutableArray<Arc> arcs)
+        : this(groupoid, tree, group, arcs, tree.Root)
+    {
+    }
+
+    private VertexGroup(ShapeGroupoid groupoid, RegionTree tree, PermutationGroup group, ImmutableArray<Arc> arcs, int baseShape)
     {
         Groupoid = groupoid;
         Group = group;
+        BaseShape = baseShape;
         _tree = tree;
         _arcs = arcs;
     }
@@ -27,12 +33,12 @@ public sealed class VertexGroup
     public ShapeGroupoid Groupoid { get; }
 
     /// <summary>The number of the base shape.</summary>
-    public int BaseShape => _tree.Root;
+    public int BaseShape { get; }
 
     /// <summary>The region of the base shape.</summary>
     public Region Region => Groupoid.Regions[Groupoid.RegionOf(BaseShape)];
 
-    /// <summary>The group, acting on all sites; its stabilizer chain is built.</summary>
+    /// <summary>The group, acting on all sites; its order is proven.</summary>
     public PermutationGroup Group { get; }
 
     /// <summary>The number of its members.</summary>
@@ -46,16 +52,16 @@ public sealed class VertexGroup
     public ImmutableArray<TurnPath> GeneratorLoops() => [.. _arcs.Select(arc => Loop(arc))];
 
     /// <summary>A path from the base shape to a shape of its region along the spanning tree: τ(shape).</summary>
+    /// <remarks>From the base at the tree's root it goes down the tree; from a base that the group was <see cref="MovedTo"/>, up to where the two branches part and down again.</remarks>
     /// <exception cref="ArgumentException">The shape lies in another region.</exception>
-    public TurnPath TreePath(int shape) => TurnPath.Follow(Groupoid.ShapeAt(BaseShape), _tree.PathTo(shape)
-        ?? throw new ArgumentException($"Shape {shape} is not in the region of the base shape {BaseShape}.", nameof(shape)));
+    /// <exception cref="InvalidOperationException">The way up would be too long to write out, because one-way steps on it can only be undone by going round.</exception>
+    public TurnPath TreePath(int shape) => PathBetween(BaseShape, shape);
 
     private TurnPath Loop(Arc arc)
     {
         var there = TreePath(arc.Shape);
         var across = TurnPath.Follow(there.Target, Groupoid.Mechanism.Steps[arc.Step]);
-        var back = TreePath(Groupoid.IndexOf(across.Target));
-        return there.Then(across).Then(back.Inverse());
+        return there.Then(across).Then(PathBetween(Groupoid.IndexOf(across.Target), BaseShape));
     }
 
     /// <summary>A free step at a shape.</summary>

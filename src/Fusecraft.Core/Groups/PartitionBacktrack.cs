@@ -57,6 +57,15 @@ internal sealed class PartitionBacktrack
         _representative = new int[degree];
     }
 
+    /// <summary>So many images of base points are tried in one search; then it is given up.</summary>
+    public long MaxTrials { get; init; } = long.MaxValue;
+
+    /// <summary>So many were tried in the last search.</summary>
+    public long Trials { get; private set; }
+
+    /// <summary>True when the last search was given up: then what it returned means nothing, unless it found a member.</summary>
+    public bool IsExhausted => Trials >= MaxTrials;
+
     /// <summary>The common members that carry the structure to itself.</summary>
     public PermutationGroup Stabilizer()
     {
@@ -65,6 +74,7 @@ internal sealed class PartitionBacktrack
             return _stabilizer;
         }
 
+        Trials = 0;
         _target = _source;
         var generators = ImmutableArray.CreateBuilder<Permutation>();
         var order = BigInteger.One;
@@ -105,10 +115,25 @@ internal sealed class PartitionBacktrack
         Debug.Assert(target.Degree == _source.Degree && target.Permutations.Length == _source.Permutations.Length, "The structures differ in kind.");
         Stabilizer();
         _target = target;
+        return Find([.. _groups.Select(_ => Permutation.Identity)]);
+    }
+
+    /// <summary>A permutation that carries the structure to itself and lies, for each group G in turn, in the right coset <c>G * representative</c>; null where there is none. Not in the groups, as a rule.</summary>
+    public Permutation? FindInCosets(params ImmutableArray<Permutation> representatives)
+    {
+        Stabilizer();
+        _target = _source;
+        return Find(representatives);
+    }
+
+    // What holds of the members of a group along its chain holds of those of a coset too: each is a member followed by the representative.
+    private Permutation? Find(ImmutableArray<Permutation> representatives)
+    {
+        Trials = 0;
         Array.Clear(_cells[0]);
-        foreach (var members in _members)
+        for (var x = 0; x < _members.Length; x++)
         {
-            Lanes.Identity<int>(members[0]);
+            representatives[x].CopyLanes<int>(_members[x][0]);
         }
 
         return TryRefine(0, 0) && Descend(0) ? Permutation.FromTrustedImages<int>(_members[0][_steps]) : null;
@@ -139,6 +164,12 @@ internal sealed class PartitionBacktrack
     private bool TryStep(int step, int image)
     {
         _cancellation.ThrowIfCancellationRequested();
+        if (Trials >= MaxTrials)
+        {
+            return false;
+        }
+
+        Trials++;
         _images[step] = image;
         _cells[step].CopyTo(_cells[step + 1], 0);
         for (var x = 0; x < _members.Length; x++)

@@ -49,9 +49,10 @@ public sealed partial class Examination
     public HomeRegionFigures? HomeRegion { get; private init; }
 
     /// <summary>
-    /// The number of states reachable from home: those of the home region when it is the only one. Null when there are several regions, for then the number is not a simple product.
+    /// The number of states reachable from home, over all regions, as <see cref="ShapeGroupoid.CountReachableStates"/> gives it with its default budget. Null when that does not suffice: with several regions the
+    /// number is not a simple product.
     /// </summary>
-    public BigInteger? ReachableStateCount => RegionCount == 1 ? HomeRegion?.StateCount : null;
+    public BigInteger? ReachableStateCount { get; private init; }
 
     /// <summary>Examines a mechanism: explores all shapes from home and extracts the vertex group there, proven.</summary>
     /// <param name="mechanism">The mechanism.</param>
@@ -60,7 +61,7 @@ public sealed partial class Examination
     /// <param name="cancellationToken">Ends the work early.</param>
     /// <exception cref="MechanismFormatException">Two steps written alike are free in one reachable shape.</exception>
     /// <exception cref="OperationCanceledException">The token asked for it.</exception>
-    /// <remarks>Costs what <see cref="ShapeGroupoid.Explore"/> and <see cref="ShapeGroupoid.VertexGroupAt"/> cost.</remarks>
+    /// <remarks>Costs what <see cref="ShapeGroupoid.Explore"/> and <see cref="ShapeGroupoid.VertexGroupAt"/> cost, and with several regions what <see cref="ShapeGroupoid.CountReachableStates"/> does.</remarks>
     public static Examination Of(
         Mechanism mechanism, ExplorationOptions? options = null, IProgress<ExplorationProgress>? progress = null, CancellationToken cancellationToken = default)
     {
@@ -70,6 +71,7 @@ public sealed partial class Examination
             return new Examination(mechanism, groupoid);
         }
 
+        var home = groupoid.VertexGroupAt(0, cancellationToken);
         return new Examination(mechanism, groupoid)
         {
             DeadEndCount = groupoid.DeadEndCount,
@@ -77,7 +79,8 @@ public sealed partial class Examination
             RegionCount = groupoid.Regions.Length,
             PassageCount = groupoid.PassageCount,
             TrapCount = groupoid.TrapCount,
-            HomeRegion = new HomeRegionFigures(groupoid.VertexGroupAt(0, cancellationToken)),
+            HomeRegion = new HomeRegionFigures(home),
+            ReachableStateCount = ReachableStates.Count(home, StateCountOptions.Default, cancellationToken),
         };
     }
 }

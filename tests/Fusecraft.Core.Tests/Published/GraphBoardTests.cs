@@ -166,6 +166,7 @@ public class GraphBoardTests
         // A slide for each of the two ways along each pair of neighbours: once it is seen as a free forward step.
         Assert.Equal((columns * (rows - 1)) + (rows * (columns - 1)), groupoid.FreeTurnCount);
         Assert.Equal(columns + rows - 2, groupoid.HomeRegion.Eccentricity);
+        IsConjugateEverywhere(group);
     }
 
     // Checks the order at the gap, and that the groups of all other shapes are conjugate to it by a path there.
@@ -178,15 +179,18 @@ public class GraphBoardTests
         Assert.Equal(order, home.Order);
         Assert.Equal(ChainProof.Proven, home.Group.Chain.Proof);
         Assert.DoesNotContain(gap - 1, home.Group.MovedOrbits.SelectMany(orbit => orbit));
-        if (graph.Vertices <= 10)
-        {
-            for (var shape = 1; shape < groupoid.ShapeCount; shape++)
-            {
-                Conjugacy.Holds(home, groupoid.VertexGroupAt(shape));
-            }
-        }
-
+        IsConjugateEverywhere(home);
         return home;
+    }
+
+    private static void IsConjugateEverywhere(VertexGroup home)
+    {
+        for (var shape = 1; shape < home.Groupoid.ShapeCount; shape++)
+        {
+            var group = home.Groupoid.VertexGroupAt(shape);
+            Conjugacy.Holds(home, group);
+            Assert.True(home.MovedTo(shape).Group.SameGroupAs(group.Group));
+        }
     }
 
     private static (int Vertices, List<(int A, int B)> Edges) AddEar((int Vertices, List<(int A, int B)> Edges) graph, SeededRandom random)

@@ -28,6 +28,7 @@ public class ThirteenPointGameTests
             Assert.Equal([12, 11, 10, 9, 8], group.Group.Chain.OrbitLengths.ToArray());
             Assert.Equal(12, Assert.Single(group.Group.MovedOrbits).Length);
             Conjugacy.Holds(home, group);
+            Assert.True(home.MovedTo(shape).Group.SameGroupAs(group.Group));
         }
     }
 

@@ -31,7 +31,7 @@ public class ExaminationTests
     [Fact]
     public void Regions_passages_traps_dead_ends_and_stuck_shapes_are_told_apart() => Assert.Equal(
         """
-        {"format":"fusecraft/examination/1","mechanism":{"name":"One-way canal","sites":4,"pieces":4,"turns":3,"blocks":0},"isComplete":true,"shapes":4,"freeTurns":3,"deadEnds":2,"stuckShapes":1,"regions":3,"passages":2,"traps":1,"homeRegion":{"shapes":1,"eccentricity":0,"states":"1","vertexGroup":{"order":"1","factors":"1","proof":"proven","degree":0,"orbits":[]}},"reachableStates":null}
+        {"format":"fusecraft/examination/1","mechanism":{"name":"One-way canal","sites":4,"pieces":4,"turns":3,"blocks":0},"isComplete":true,"shapes":4,"freeTurns":3,"deadEnds":2,"stuckShapes":1,"regions":3,"passages":2,"traps":1,"homeRegion":{"shapes":1,"eccentricity":0,"states":"1","vertexGroup":{"order":"1","factors":"1","proof":"proven","degree":0,"orbits":[]}},"reachableStates":"4"}
         """,
         Examination.Of(OneWayCanal).ToJson());
 
