@@ -162,7 +162,7 @@ public sealed partial class ExamineCommandTests : IDisposable
             """
             A shape is where the blocks and marks are, labels ignored.
               shapes found so far         1        there are more
-              free turns found so far     1        pairs of a shape and a turn whose forward step is free
+              free turns found so far     0        pairs of a shape and a turn whose forward step is free
 
             """,
             text.Output,
@@ -173,7 +173,7 @@ public sealed partial class ExamineCommandTests : IDisposable
         var json = await _bench.RunAsync("examine", canal, "--max-shapes", "1", "--json");
         Assert.Equal(
             """
-            {"format":"fusecraft/examination/1","mechanism":{"name":"One-way canal","sites":4,"pieces":4,"turns":3,"blocks":0},"isComplete":false,"shapes":1,"freeTurns":1,"deadEnds":null,"stuckShapes":null,"regions":null,"passages":null,"traps":null,"homeRegion":null,"reachableStates":null}
+            {"format":"fusecraft/examination/1","mechanism":{"name":"One-way canal","sites":4,"pieces":4,"turns":3,"blocks":0},"isComplete":false,"shapes":1,"freeTurns":0,"deadEnds":null,"stuckShapes":null,"regions":null,"passages":null,"traps":null,"homeRegion":null,"reachableStates":null}
 
             """,
             json.Output);

@@ -31,7 +31,7 @@ public sealed partial class ShapeGroupoid
     /// <summary>The number of shapes found.</summary>
     public int ShapeCount => _explorer.Shapes.Count;
 
-    /// <summary>The number of pairs (shape, turn) whose forward step is free.</summary>
+    /// <summary>The number of pairs (shape, turn) whose forward step is free; when not complete, at the shapes all of whose steps were tried.</summary>
     public long FreeTurnCount => _explorer.FreeTurns;
 
     /// <summary>The number of shapes where exactly one turn has a free step, in either sense.</summary>

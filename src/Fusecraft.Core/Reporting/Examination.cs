@@ -27,7 +27,7 @@ public sealed partial class Examination
     /// <summary>The number of shapes reachable from home; of those found so far, when not complete.</summary>
     public int ShapeCount { get; }
 
-    /// <summary>The number of pairs (shape, turn) whose forward step is free; of those found so far, when not complete.</summary>
+    /// <summary>The number of pairs (shape, turn) whose forward step is free; when not complete, at the shapes all of whose steps were tried.</summary>
     public long FreeTurnCount { get; }
 
     /// <summary>The number of shapes where exactly one turn has a free step, in either sense.</summary>

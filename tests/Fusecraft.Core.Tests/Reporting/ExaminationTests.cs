@@ -45,7 +45,7 @@ public class ExaminationTests
         Assert.Null(examination.ReachableStateCount);
         Assert.Equal(
             """
-            {"format":"fusecraft/examination/1","mechanism":{"name":"One-way canal","sites":4,"pieces":4,"turns":3,"blocks":0},"isComplete":false,"shapes":1,"freeTurns":1,"deadEnds":null,"stuckShapes":null,"regions":null,"passages":null,"traps":null,"homeRegion":null,"reachableStates":null}
+            {"format":"fusecraft/examination/1","mechanism":{"name":"One-way canal","sites":4,"pieces":4,"turns":3,"blocks":0},"isComplete":false,"shapes":1,"freeTurns":0,"deadEnds":null,"stuckShapes":null,"regions":null,"passages":null,"traps":null,"homeRegion":null,"reachableStates":null}
             """,
             examination.ToJson());
     }

@@ -16,6 +16,7 @@ internal sealed class TreeLabels
 
     // For each shape the row held for it, or -1; null where every shape of the tree has the row of its own number.
     private readonly int[]? _rowOf;
+    private readonly int _held;
 
     public TreeLabels(RegionTree tree, SiteRows rows, byte[] steps, long mostBytes = MostBytes)
     {
@@ -32,15 +33,23 @@ internal sealed class TreeLabels
         if (every == 1 && tree.IsInOrder)
         {
             HoldAll();
+            _held = tree.Order.Length;
         }
         else
         {
-            _rowOf = HoldSome(every);
+            (_rowOf, _held) = HoldSome(every);
         }
     }
 
-    /// <summary>The row held for a shape may be read from here; null where it is recomputed.</summary>
-    public ref byte Held(int shape) => ref _inverses.At(_rowOf is null ? shape : Math.Max(0, _rowOf[shape]));
+    /// <summary>Tells the memory that the row of a shape, in the tree or not, will be asked for.</summary>
+    public void Announce(int shape)
+    {
+        var row = _rowOf is null ? shape : shape < _rowOf.Length ? _rowOf[shape] : -1;
+        if (row >= 0 && row < _held)
+        {
+            Memory.Announce(ref _inverses.At(row), _rows.Pitch);
+        }
+    }
 
     /// <summary>The inverse of the permutation of the path to a shape; where it is not held it is written into the memory given.</summary>
     /// <param name="shape">A shape of the tree.</param>
@@ -68,7 +77,7 @@ internal sealed class TreeLabels
         }
     }
 
-    private int[] HoldSome(int every)
+    private (int[] RowOf, int Held) HoldSome(int every)
     {
         var rowOf = new int[_tree.Order.Max() + 1];
         Array.Fill(rowOf, -1);
@@ -86,7 +95,7 @@ internal sealed class TreeLabels
             }
         }
 
-        return rowOf;
+        return (rowOf, count);
     }
 
     // τ(s)⁻¹ = t⁻¹ · τ(parent)⁻¹, so the steps gather from the last one upwards.

@@ -179,7 +179,7 @@ internal sealed class VertexGroupExtraction
                 {
                     if (_targets[i] >= 0)
                     {
-                        Memory.Announce(ref _owner._labels.Held(_targets[i]), _owner._rows.Pitch);
+                        _owner._labels.Announce(_targets[i]);
                         _owner._tree.Announce(_targets[i]);
                     }
                 }
