@@ -51,4 +51,66 @@ public class LayeredDiskTests
             Assert.Equal(ChainProof.Proven, group.Group.Chain.Proof);
         }
     }
+
+    // 29: from memory, no source opened; 24: own figure.
+    [Fact]
+    public void A_layer_has_29_shapes_up_to_rotation_and_24_up_to_reflection_too()
+    {
+        var layers = Layers().SelectMany(pair => (int[])[pair.Top, pair.Bottom]).ToHashSet();
+        Assert.Equal(29, layers.Count);
+        Assert.Equal(24, layers.Select(layer => Math.Min(layer, Reflected(layer))).Distinct().Count());
+    }
+
+    // Widely printed; value from memory, no source opened: by the number of wide wedges above, 2 … 6.
+    [Fact]
+    public void There_are_170_pairs_of_layer_shapes()
+    {
+        var pairs = Layers();
+        Assert.Equal(170, pairs.Count);
+        Assert.Equal([5, 30, 100, 30, 5], pairs.GroupBy(pair => BitOperations.PopCount((uint)pair.Top)).OrderBy(group => group.Key).Select(group => group.Count()));
+    }
+
+    // From memory, no source opened.
+    [Fact]
+    public void There_are_90_pairs_up_to_exchange_and_65_up_to_mirror_images_too()
+    {
+        var pairs = Layers();
+        Assert.Equal(90, pairs.Select(Sorted).Distinct().Count());
+        Assert.Equal(65, pairs.Select(pair => Least(Sorted(pair), Sorted((Reflected(pair.Top), Reflected(pair.Bottom))))).Distinct().Count());
+
+        static (int, int) Sorted((int Top, int Bottom) pair) => (Math.Min(pair.Top, pair.Bottom), Math.Max(pair.Top, pair.Bottom));
+        static (int, int) Least((int, int) one, (int, int) other) => one.CompareTo(other) <= 0 ? one : other;
+    }
+
+    // 3678 x 2 x 8!^2: from memory, no source opened; only positions in which the slice can turn.
+    [Fact]
+    public void Positions_that_let_the_slice_turn_are_fewer()
+    {
+        var groupoid = ShapeGroupoid.Explore(MechanismFile.Parse(Disk));
+        var slice = groupoid.Mechanism.FindTurn("S")!.Forward;
+        var free = Enumerable.Range(0, groupoid.ShapeCount).Count(shape => groupoid.After(shape, slice) >= 0);
+        Assert.Equal(3678, free);
+        Assert.Equal(new BigInteger(11958666854400), groupoid.VertexGroupAt(0).Order * free);
+    }
+
+    // The pairs of layer shapes, each layer up to rotation: a bit for each place that a wide wedge shares with the next one.
+    private static HashSet<(int Top, int Bottom)> Layers()
+    {
+        var groupoid = ShapeGroupoid.Explore(MechanismFile.Parse(Disk));
+        return [.. Enumerable.Range(0, groupoid.ShapeCount).Select(shape =>
+        {
+            int[] layers = [0, 0];
+            foreach (var block in groupoid.ShapeAt(shape).Blocks)
+            {
+                var (first, second) = (block.Min() % 12, block.Max() % 12);
+                layers[block[0] / 12] |= 1 << (second == first + 1 ? first : 11);
+            }
+
+            return (LeastRotation(layers[0]), LeastRotation(layers[1]));
+        })];
+    }
+
+    private static int LeastRotation(int layer) => Enumerable.Range(0, 12).Min(by => ((layer << by) | (layer >> (12 - by))) & 0xFFF);
+
+    private static int Reflected(int layer) => LeastRotation(Enumerable.Range(0, 12).Sum(place => (layer >> place & 1) << (11 - place)));
 }
