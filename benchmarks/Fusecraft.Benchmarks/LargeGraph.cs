@@ -29,9 +29,7 @@ internal static class LargeGraph
             "2" => (Blocks2, 1748304, 11903832L),
             _ => (name.Split('+'), 0, 0L),
         };
-        var builder = MechanismBuilder.Cube(name, 5);
-        Array.ForEach(blocks, block => builder.Block(block.Split(' ')));
-        var mechanism = builder.Build();
+        var mechanism = Fused(name, blocks);
         Console.WriteLine($"{mechanism.Board.SlotCount} slots, {mechanism.Steps.Length} steps, {threads} threads");
         for (var round = 0; round < rounds; round++)
         {
@@ -59,6 +57,35 @@ internal static class LargeGraph
                 $"{kind}: {count} shapes, {freeTurns} free turns in {explored.TotalSeconds:F3} s; as many reads by two threads in {bytes >> 20} MB {reads.TotalSeconds:F3} s; ratio {explored / reads:F2} (by processor time {exploredCpu.TotalSeconds:F3} s, {readsCpu.TotalSeconds:F3} s, {exploredCpu / readsCpu:F2}); "
                 + $"{(double)bytes / count:F1} bytes a shape held at most, {(round == 0 ? $"{(double)peak / count:F1} with the whole process at its peak" : "no peak, for the process has done other things before")}");
         }
+    }
+
+    /// <summary>Runs <c>large-group [18|2]</c>: the proven vertex group at home, from all shapes and from one shape of each kind up to symmetry, beside the time to explore.</summary>
+    public static void RunGroup(string[] args)
+    {
+        var mechanism = Fused("large", args is ["2"] ? Blocks2 : Blocks18);
+        var watch = Stopwatch.StartNew();
+        var groupoid = ShapeGroupoid.Explore(mechanism);
+        var explored = watch.Elapsed;
+        watch.Restart();
+        var order = groupoid.VertexGroupAt(0).Order;
+        Console.WriteLine($"{groupoid.ShapeCount} shapes explored in {explored.TotalSeconds:F2} s; vertex group proven in {watch.Elapsed.TotalSeconds:F2} s, {watch.Elapsed / explored:F1} times that; {PeakBytes() >> 20} MB at the peak");
+        watch.Restart();
+        var orbits = ShapeOrbits.Explore(mechanism);
+        var represented = watch.Elapsed;
+        watch.Restart();
+        if (orbits.VertexGroupAtHome().Order != order || orbits.ShapeCount != groupoid.ShapeCount)
+        {
+            throw new InvalidOperationException("The shapes up to symmetry give another group or another number of shapes.");
+        }
+
+        Console.WriteLine($"{orbits.RepresentativeCount} shapes up to symmetry explored in {represented.TotalSeconds:F2} s; the same group proven from them in {watch.Elapsed.TotalSeconds:F2} s");
+    }
+
+    private static Mechanism Fused(string name, string[] blocks)
+    {
+        var builder = MechanismBuilder.Cube(name, 5);
+        Array.ForEach(blocks, block => builder.Block(block.Split(' ')));
+        return builder.Build();
     }
 
     private static (TimeSpan Wall, TimeSpan Processor) RandomReads(long bytes, long reads)

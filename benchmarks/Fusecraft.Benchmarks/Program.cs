@@ -7,6 +7,9 @@ switch (args)
     case ["large-graph", ..]:
         LargeGraph.Run(args[1..]);
         return 0;
+    case ["large-group", ..]:
+        LargeGraph.RunGroup(args[1..]);
+        return 0;
     case ["small-graphs"]:
         SmallGraphs.Run();
         return 0;
