@@ -162,6 +162,7 @@ internal sealed class ChainTables<T> : ChainTables
         return true;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public override void WriteMember(ReadOnlySpan<int> digits, Span<int> images)
     {
         using var scratch = new Scratch<T>(2 * Stride);
@@ -196,6 +197,7 @@ internal sealed class ChainTables<T> : ChainTables
     }
 
     // The points y whose origin lies in the level's orbit: where the base point can go, given where those before go.
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static void PossibleImages(ChainLevel<T> level, ReadOnlySpan<T> origins, Span<T> marks, Span<ulong> possible)
     {
         Lanes.ComposePadded(origins, level.OrbitMarks, marks);

@@ -62,11 +62,12 @@ public sealed partial class PermutationGroup
         }
 
         var chain = _ascendingChain.Value;
-        using var scratch = new Scratch<int>(chain.OrbitLengths.Length);
+        var lengths = chain.OrbitLengths.AsSpan();
+        using var scratch = new Scratch<int>(lengths.Length);
         var digits = scratch.Span;
         for (var i = 0; i < digits.Length; i++)
         {
-            digits[i] = random.NextInt32(chain.OrbitLengths[i]);
+            digits[i] = random.NextInt32(lengths[i]);
         }
 
         chain.Tables.WriteMember(digits, images);

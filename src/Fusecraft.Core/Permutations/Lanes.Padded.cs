@@ -61,13 +61,15 @@ internal static partial class Lanes
     }
 
     /// <summary>The highest bit of each lane of a padded list, sixty-four to a word.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static void HighBits<T>(ReadOnlySpan<T> lanes, Span<ulong> bits)
         where T : unmanaged, IBinaryInteger<T>
     {
+        ref var first = ref MemoryMarshal.GetReference(lanes);
         bits.Clear();
         for (var i = 0; i < lanes.Length; i += Vector256<T>.Count)
         {
-            bits[i >> 6] |= (ulong)Vector256.LoadUnsafe(ref MemoryMarshal.GetReference(lanes), (nuint)i).ExtractMostSignificantBits() << (i & 63);
+            bits[i >> 6] |= (ulong)Vector256.LoadUnsafe(ref first, (nuint)i).ExtractMostSignificantBits() << (i & 63);
         }
     }
 

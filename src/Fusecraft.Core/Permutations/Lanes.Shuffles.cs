@@ -11,36 +11,20 @@ namespace Fusecraft.Permutations;
 internal static partial class Lanes
 {
     /// <summary>AVX-512 VBMI: tables of 64 or 128 bytes at a time.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     internal static void ComposeVbmi(ref byte p, ref byte q, ref byte result, int length)
     {
-        if (length == 32)
+        if (length == 64)
+        {
+            Avx512Vbmi.PermuteVar64x8(Vector512.LoadUnsafe(ref q), Vector512.LoadUnsafe(ref p)).StoreUnsafe(ref result);
+        }
+        else if (length == 32)
         {
             Avx512Vbmi.VL.PermuteVar32x8(Vector256.LoadUnsafe(ref q), Vector256.LoadUnsafe(ref p)).StoreUnsafe(ref result);
-            return;
         }
-
-        var q0 = Load64(ref q, 0, length);
-        var q1 = Load64(ref q, 64, length);
-        var q2 = Load64(ref q, 128, length);
-        var q3 = Load64(ref q, 192, length);
-        for (var i = 0; i < length; i += 64)
+        else
         {
-            var index = Load64(ref p, i, length);
-            var image = Avx512Vbmi.PermuteVar64x8x2(q0, index, q1);
-            if (length > 128)
-            {
-                var beyond = Avx512Vbmi.PermuteVar64x8x2(q2, index, q3);
-                image = Vector512.ConditionalSelect(Vector512.LessThan(index.AsSByte(), Vector512<sbyte>.Zero).AsByte(), beyond, image);
-            }
-
-            if (length - i >= 64)
-            {
-                image.StoreUnsafe(ref result, (nuint)i);
-            }
-            else
-            {
-                image.GetLower().StoreUnsafe(ref result, (nuint)i);
-            }
+            ComposeVbmiLong(ref p, ref q, ref result, length);
         }
     }
 
@@ -83,6 +67,34 @@ internal static partial class Lanes
             }
 
             image.StoreUnsafe(ref result, i);
+        }
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private static void ComposeVbmiLong(ref byte p, ref byte q, ref byte result, int length)
+    {
+        var q0 = Load64(ref q, 0, length);
+        var q1 = Load64(ref q, 64, length);
+        var q2 = Load64(ref q, 128, length);
+        var q3 = Load64(ref q, 192, length);
+        for (var i = 0; i < length; i += 64)
+        {
+            var index = Load64(ref p, i, length);
+            var image = Avx512Vbmi.PermuteVar64x8x2(q0, index, q1);
+            if (length > 128)
+            {
+                var beyond = Avx512Vbmi.PermuteVar64x8x2(q2, index, q3);
+                image = Vector512.ConditionalSelect(Vector512.LessThan(index.AsSByte(), Vector512<sbyte>.Zero).AsByte(), beyond, image);
+            }
+
+            if (length - i >= 64)
+            {
+                image.StoreUnsafe(ref result, (nuint)i);
+            }
+            else
+            {
+                image.GetLower().StoreUnsafe(ref result, (nuint)i);
+            }
         }
     }
 

@@ -28,7 +28,7 @@ internal static partial class Lanes
             foreach (var start in starts)
             {
                 ref var window = ref Unsafe.Add(ref table, start);
-                Pair(Table(ref window, 0), Table(ref window, 1), Vector256.LoadUnsafe(ref first, (nuint)start)).StoreUnsafe(ref to, (nuint)start);
+                LookUp(Vector256.LoadUnsafe(ref window), Vector256.LoadUnsafe(ref first, (nuint)start)).StoreUnsafe(ref to, (nuint)start);
             }
         }
         else
@@ -47,7 +47,9 @@ internal static partial class Lanes
 
     /// <summary>For each index below 32 the byte of the table there; anything for others.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static Vector256<byte> LookUp(Vector256<byte> table, Vector256<byte> index) => Avx2.IsSupported
-        ? Pair(Avx2.Permute2x128(table, table, 0x00), Avx2.Permute2x128(table, table, 0x11), index)
-        : Vector256.Shuffle(table, index);
+    public static Vector256<byte> LookUp(Vector256<byte> table, Vector256<byte> index) => Avx512Vbmi.VL.IsSupported
+        ? Avx512Vbmi.VL.PermuteVar32x8(table, index)
+        : Avx2.IsSupported
+            ? Pair(Avx2.Permute2x128(table, table, 0x00), Avx2.Permute2x128(table, table, 0x11), index)
+            : Vector256.Shuffle(table, index);
 }
