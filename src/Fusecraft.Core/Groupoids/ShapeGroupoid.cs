@@ -42,6 +42,8 @@ public sealed partial class ShapeGroupoid
 
     internal ExploredShapes Store => _explorer.Shapes;
 
+    internal int DegreeOfParallelism => _explorer.DegreeOfParallelism;
+
     /// <summary>The first shape of each distance, and at the end the number of shapes.</summary>
     internal IReadOnlyList<int> LevelStarts => _explorer.LevelStarts;
 

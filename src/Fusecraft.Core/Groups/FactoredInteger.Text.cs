@@ -98,7 +98,7 @@ public readonly partial struct FactoredInteger : ISpanParsable<FactoredInteger>,
         return true;
     }
 
-    private static bool IsPrime(int number)
+    internal static bool IsPrime(int number)
     {
         for (var divisor = 2; divisor <= number / divisor; divisor++)
         {

@@ -55,6 +55,25 @@ internal static partial class Lanes
         }
     }
 
+    /// <summary>True for an odd permutation: each cycle of k points counts k - 1.</summary>
+    public static bool IsOdd(ReadOnlySpan<int> images)
+    {
+        using var scratch = new Scratch<bool>(images.Length);
+        var seen = scratch.Span;
+        seen.Clear();
+        var isOdd = false;
+        for (var start = 0; start < images.Length; start++)
+        {
+            for (var point = start; !seen[point]; point = images[point])
+            {
+                seen[point] = true;
+                isOdd ^= images[point] != start;
+            }
+        }
+
+        return isOdd;
+    }
+
     /// <summary>The number of points up to and including the largest one moved.</summary>
     public static int SupportEnd<T>(ReadOnlySpan<T> images)
         where T : unmanaged, IBinaryInteger<T>

@@ -94,7 +94,7 @@ public sealed partial class Solver
 
         // Passages lie between. Whatever path there is, it makes with the tree a loop on the graph of all shapes, walked in either sense.
         var tree = RegionTree.OfAll(groupoid);
-        var all = VertexGroupExtraction.Run(groupoid, tree, Environment.ProcessorCount, cancellation);
+        var all = VertexGroupExtraction.Run(groupoid, tree, groupoid.DegreeOfParallelism, cancellation);
         var across = all.Group.Explain(wanted * TurnPath.Follow(groupoid.ShapeAt(0), tree.PathTo(end)!.Value).Permutation.Inverse());
         return across.IsMember
             ? (null, null, "A passage that cannot be walked back lies between the two shapes, so membership in a vertex group does not settle it.")

@@ -11,37 +11,37 @@ namespace Fusecraft.Tests.Groupoids;
 /// <summary>What holds for every mechanism, checked on random small ones against an interpreter that knows no groups and no bitsets.</summary>
 public class RandomMechanismLawTests
 {
-    private const ulong FixedSeeds = 300;
+    private const ulong FixedSeeds = RandomMechanisms.FixedSeeds;
 
     [Property(MaxTest = 100)]
     public void States_by_exhaustive_search_are_shapes_times_vertex_group(ulong seed) => CheckStates(seed);
 
     [Fact]
-    public void States_by_exhaustive_search_are_shapes_times_vertex_group_on_fixed_seeds() => ForFixedSeeds(CheckStates);
+    public void States_by_exhaustive_search_are_shapes_times_vertex_group_on_fixed_seeds() => RandomMechanisms.ForFixedSeeds(CheckStates);
 
     [Property(MaxTest = 100)]
     public void Shapes_arrows_and_regions_are_those_of_a_plain_reading(ulong seed) => CheckFigures(seed);
 
     [Fact]
-    public void Shapes_arrows_and_regions_are_those_of_a_plain_reading_on_fixed_seeds() => ForFixedSeeds(CheckFigures);
+    public void Shapes_arrows_and_regions_are_those_of_a_plain_reading_on_fixed_seeds() => RandomMechanisms.ForFixedSeeds(CheckFigures);
 
     [Property(MaxTest = 100)]
     public void A_step_is_barred_exactly_where_a_true_reason_is_named(ulong seed) => CheckBarriers(seed);
 
     [Fact]
-    public void A_step_is_barred_exactly_where_a_true_reason_is_named_on_fixed_seeds() => ForFixedSeeds(CheckBarriers);
+    public void A_step_is_barred_exactly_where_a_true_reason_is_named_on_fixed_seeds() => RandomMechanisms.ForFixedSeeds(CheckBarriers);
 
     [Property(MaxTest = 50)]
     public void A_path_has_an_inverse_of_free_steps_exactly_where_there_is_a_way_back(ulong seed) => CheckInverses(seed);
 
     [Fact]
-    public void A_path_has_an_inverse_of_free_steps_exactly_where_there_is_a_way_back_on_fixed_seeds() => ForFixedSeeds(CheckInverses);
+    public void A_path_has_an_inverse_of_free_steps_exactly_where_there_is_a_way_back_on_fixed_seeds() => RandomMechanisms.ForFixedSeeds(CheckInverses);
 
     [Fact]
-    public void Vertex_groups_of_a_region_are_conjugate_by_any_path() => ForFixedSeeds(CheckVertexGroups);
+    public void Vertex_groups_of_a_region_are_conjugate_by_any_path() => RandomMechanisms.ForFixedSeeds(CheckVertexGroups);
 
     [Fact]
-    public void Renaming_and_renumbering_sites_changes_no_figure() => ForFixedSeeds(seed =>
+    public void Renaming_and_renumbering_sites_changes_no_figure() => RandomMechanisms.ForFixedSeeds(seed =>
     {
         var definition = RandomMechanisms.From(seed);
         var relabelled = RandomMechanisms.Relabelled(definition, new SeededRandom(seed));
@@ -76,21 +76,6 @@ public class RandomMechanismLawTests
         Assert.All(counts, pair => Assert.True(pair.Value >= 10, $"only {pair.Value} of {FixedSeeds} have {pair.Key}"));
 
         void Count(string what, bool has) => counts[what] = counts.GetValueOrDefault(what) + (has ? 1 : 0);
-    }
-
-    private static void ForFixedSeeds(Action<ulong> check)
-    {
-        for (var seed = 0UL; seed < FixedSeeds; seed++)
-        {
-            try
-            {
-                check(seed);
-            }
-            catch (Exception problem)
-            {
-                throw new InvalidOperationException($"Seed {seed}: {problem.Message}\n{MechanismFile.Write(RandomMechanisms.From(seed))}", problem);
-            }
-        }
     }
 
     private static void CheckStates(ulong seed)

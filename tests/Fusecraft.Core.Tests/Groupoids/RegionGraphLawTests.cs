@@ -8,7 +8,7 @@ namespace Fusecraft.Tests.Groupoids;
 /// <summary>What a region's graph says, on random small mechanisms, against trying everything.</summary>
 public class RegionGraphLawTests
 {
-    private const ulong FixedSeeds = 300;
+    private const ulong FixedSeeds = RandomMechanisms.FixedSeeds;
 
     /// <summary>Larger regions take too long to cut apart arrow by arrow.</summary>
     private const int MaxShapesToCut = 40;
@@ -17,25 +17,25 @@ public class RegionGraphLawTests
     public void Lists_and_profiles_are_those_of_a_plain_reading(ulong seed) => CheckLists(seed);
 
     [Fact]
-    public void Lists_and_profiles_are_those_of_a_plain_reading_on_fixed_seeds() => ForFixedSeeds(CheckLists);
+    public void Lists_and_profiles_are_those_of_a_plain_reading_on_fixed_seeds() => RandomMechanisms.ForFixedSeeds(CheckLists);
 
     [Property(MaxTest = 50)]
     public void Distances_eccentricities_and_diameters_are_those_of_flooding(ulong seed) => CheckDistances(seed);
 
     [Fact]
-    public void Distances_eccentricities_and_diameters_are_those_of_flooding_on_fixed_seeds() => ForFixedSeeds(CheckDistances);
+    public void Distances_eccentricities_and_diameters_are_those_of_flooding_on_fixed_seeds() => RandomMechanisms.ForFixedSeeds(CheckDistances);
 
     [Property(MaxTest = 50)]
     public void Bridges_cut_shapes_and_gates_are_what_cannot_be_left_out(ulong seed) => CheckCuts(seed);
 
     [Fact]
-    public void Bridges_cut_shapes_and_gates_are_what_cannot_be_left_out_on_fixed_seeds() => ForFixedSeeds(CheckCuts);
+    public void Bridges_cut_shapes_and_gates_are_what_cannot_be_left_out_on_fixed_seeds() => RandomMechanisms.ForFixedSeeds(CheckCuts);
 
     [Property(MaxTest = 50)]
     public void Shortest_loops_are_those_of_walking_over_arrows(ulong seed) => CheckLoops(seed);
 
     [Fact]
-    public void Shortest_loops_are_those_of_walking_over_arrows_on_fixed_seeds() => ForFixedSeeds(CheckLoops);
+    public void Shortest_loops_are_those_of_walking_over_arrows_on_fixed_seeds() => RandomMechanisms.ForFixedSeeds(CheckLoops);
 
     [Fact]
     public void The_random_regions_show_everything_that_matters()
@@ -67,21 +67,6 @@ public class RegionGraphLawTests
         Assert.All(counts, pair => Assert.True(pair.Value >= 10, $"only {pair.Value} have {pair.Key}"));
 
         void Count(string what, bool has) => counts[what] = counts.GetValueOrDefault(what) + (has ? 1 : 0);
-    }
-
-    private static void ForFixedSeeds(Action<ulong> check)
-    {
-        for (var seed = 0UL; seed < FixedSeeds; seed++)
-        {
-            try
-            {
-                check(seed);
-            }
-            catch (Exception problem)
-            {
-                throw new InvalidOperationException($"Seed {seed}: {problem.Message}\n{MechanismFile.Write(RandomMechanisms.From(seed))}", problem);
-            }
-        }
     }
 
     private static void CheckLists(ulong seed)

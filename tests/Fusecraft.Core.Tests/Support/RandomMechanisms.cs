@@ -7,6 +7,9 @@ namespace Fusecraft.Tests.Support;
 /// <summary>Small custom mechanisms with everything a file can hold: pieces of several sites, blocks, marks, nested guards, one-way turns, back guards, carried pieces. A seed gives one of them.</summary>
 internal sealed class RandomMechanisms
 {
+    /// <summary>The seeds below this one are tried each time.</summary>
+    public const ulong FixedSeeds = 300;
+
     private static readonly string[] Letters = ["a", "b", "c", "d", "e", "f", "g"];
     private readonly SeededRandom _random;
     private readonly ImmutableArray<string> _sites;
@@ -20,6 +23,22 @@ internal sealed class RandomMechanisms
     }
 
     public static MechanismDefinition From(ulong seed) => new RandomMechanisms(seed).Make(seed);
+
+    /// <summary>Checks the fixed seeds; where one fails it names the seed and shows the mechanism.</summary>
+    public static void ForFixedSeeds(Action<ulong> check)
+    {
+        for (var seed = 0UL; seed < FixedSeeds; seed++)
+        {
+            try
+            {
+                check(seed);
+            }
+            catch (Exception problem)
+            {
+                throw new InvalidOperationException($"Seed {seed}: {problem.Message}\n{MechanismFile.Write(From(seed))}", problem);
+            }
+        }
+    }
 
     /// <summary>The same mechanism with its sites in another order and under other names.</summary>
     public static MechanismDefinition Relabelled(MechanismDefinition definition, SeededRandom random)

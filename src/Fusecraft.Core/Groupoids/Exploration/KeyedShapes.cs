@@ -1,7 +1,6 @@
 using System.Numerics;
 using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
-using System.Runtime.Intrinsics.X86;
 using Fusecraft.Mechanisms;
 
 namespace Fusecraft.Groupoids;
@@ -169,13 +168,7 @@ internal sealed partial class KeyedShapes<TWidth> : ExploredShapes
     private static ulong Tag(ulong hash) => hash << 24 >> 32;
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private unsafe void Announce(ulong hash)
-    {
-        if (Sse.IsSupported)
-        {
-            Sse.Prefetch0(Unsafe.AsPointer(ref MemoryMarshal.GetArrayDataReference(_table).At(hash >> _shift)));
-        }
-    }
+    private void Announce(ulong hash) => Memory.Announce(ref MemoryMarshal.GetArrayDataReference(_table).At(hash >> _shift));
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private bool IsAt(int shape, ref ulong key)

@@ -21,14 +21,11 @@ internal static class Memory
 
     /// <summary>Announces some bytes.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static unsafe void Announce(ref byte start, int length)
+    public static void Announce(ref byte start, int length)
     {
-        if (Sse.IsSupported)
+        for (var at = 0; at < length; at += Line)
         {
-            for (var at = 0; at < length; at += Line)
-            {
-                Sse.Prefetch0(Unsafe.AsPointer(ref Unsafe.Add(ref start, at)));
-            }
+            Announce(ref Unsafe.Add(ref start, at));
         }
     }
 }

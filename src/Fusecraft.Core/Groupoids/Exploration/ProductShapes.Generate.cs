@@ -1,7 +1,6 @@
 using System.Numerics;
 using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
-using System.Runtime.Intrinsics.X86;
 using Fusecraft.Mechanisms;
 
 namespace Fusecraft.Groupoids;
@@ -33,16 +32,6 @@ internal sealed partial class ProductShapes<T>
         }
     }
 
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static unsafe void Announce<TEntry>(ref TEntry entry)
-        where TEntry : unmanaged
-    {
-        if (Sse.IsSupported)
-        {
-            Sse.Prefetch0(Unsafe.AsPointer(ref entry));
-        }
-    }
-
     // The positions of each shape on the tracks.
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Locate(int start, int stop, Span<int> positions)
@@ -55,10 +44,10 @@ internal sealed partial class ProductShapes<T>
             {
                 (var position, code) = Math.DivRem(code, _product.Radices[i]);
                 positions[at++] = (int)position;
-                Announce(ref _terms[i][position]);
+                Memory.Announce(ref _terms[i][position]);
                 ref var row = ref MemoryMarshal.GetArrayDataReference(_parts[i]).At(position * (uint)_steps);
-                Announce(ref row);
-                Announce(ref row.At((uint)_steps - 1));
+                Memory.Announce(ref row);
+                Memory.Announce(ref row.At((uint)_steps - 1));
             }
         }
     }
@@ -80,7 +69,7 @@ internal sealed partial class ProductShapes<T>
             {
                 var step = (ulong)BitOperations.TrailingZeroCount(free);
                 var code = ulong.CreateTruncating(ones.At(step) + others.At(step));
-                Announce(ref found.At(code >> 6));
+                Memory.Announce(ref found.At(code >> 6));
                 records.At(count) = code;
                 origins.At(count++) = origin | (uint)step;
             }
@@ -112,7 +101,7 @@ internal sealed partial class ProductShapes<T>
                 }
 
                 var code = ulong.CreateTruncating(next);
-                Announce(ref _found[code >> 6]);
+                Memory.Announce(ref _found[code >> 6]);
                 candidates.Records[count] = code;
                 candidates.Origins[count++] = ((uint)(shape - candidates.First) << 16) | (uint)step;
             }

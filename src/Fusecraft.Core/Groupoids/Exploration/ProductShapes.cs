@@ -110,8 +110,8 @@ internal sealed partial class ProductShapes<T> : ExploredShapes
 
                     codes[at] = ulong.CreateTruncating(next);
                     targets[at] = 0;
-                    Announce(ref _found[codes[at] >> 6]);
-                    Announce(ref _before[codes[at] >> (6 + GroupShift)]);
+                    Memory.Announce(ref _found[codes[at] >> 6]);
+                    Memory.Announce(ref _before[codes[at] >> (6 + GroupShift)]);
                 }
 
                 at++;
@@ -123,7 +123,7 @@ internal sealed partial class ProductShapes<T> : ExploredShapes
             targets[i] = targets[i] == 0 && IsFound(codes[i]) ? PlaceOf(codes[i]) : -1;
             if (targets[i] >= 0)
             {
-                Announce(ref _numbers[targets[i]]);
+                Memory.Announce(ref _numbers[targets[i]]);
             }
         }
 
@@ -222,14 +222,14 @@ internal sealed partial class ProductShapes<T> : ExploredShapes
             for (var i = 0; i < count; i++)
             {
                 var code = ulong.CreateTruncating(_codes.At(start + i));
-                Announce(ref _found[code >> 6]);
-                Announce(ref _before[code >> (6 + GroupShift)]);
+                Memory.Announce(ref _found[code >> 6]);
+                Memory.Announce(ref _before[code >> (6 + GroupShift)]);
             }
 
             for (var i = 0; i < count; i++)
             {
                 places[i] = PlaceOf(ulong.CreateTruncating(_codes.At(start + i)));
-                Announce(ref _numbers[places[i]]);
+                Memory.Announce(ref _numbers[places[i]]);
             }
 
             for (var i = 0; i < count; i++)

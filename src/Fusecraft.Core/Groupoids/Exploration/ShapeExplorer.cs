@@ -56,6 +56,9 @@ internal sealed class ShapeExplorer
     /// <summary>False to keep to keys in a table whatever the mechanism: to test one kind of holding shapes against the other.</summary>
     public bool MayUseProduct { get; init; } = true;
 
+    /// <summary>The threads that the options allow, also for what is asked of the shapes later.</summary>
+    public int DegreeOfParallelism => _options.DegreeOfParallelism;
+
     public bool IsComplete { get; private set; } = true;
 
     /// <summary>Pairs (shape, turn) whose forward step is free, over the shapes whose steps were all tried.</summary>

@@ -67,18 +67,22 @@ internal sealed class VertexGroupExtraction
         }
 
         // From here on the chain is proven whenever it is asked, so each loop that it denies is a new generator.
-        _group.Complete(_tree.Order.Length > PieceShapes);
+        var isForMany = _tree.Order.Length > PieceShapes;
+        _group.Complete(isForMany);
         var pieces = (_tree.Order.Length + PieceShapes - 1) / PieceShapes;
         var missing = new List<(int Shape, int Step)>[pieces];
-        for (var first = 0; first < pieces; first += RoundOf(pieces))
+
+        // Pieces between which the group may grow; depends on the number of pieces alone.
+        var round = Math.Clamp(pieces / 16, 1, 256);
+        for (var first = 0; first < pieces; first += round)
         {
             _cancellation.ThrowIfCancellationRequested();
-            var end = Math.Min(pieces, first + RoundOf(pieces));
+            var end = Math.Min(pieces, first + round);
             if (end - first == 1 || _threads == 1)
             {
                 for (var piece = first; piece < end; piece++)
                 {
-                    missing[piece] = walker.FindMissing(piece * PieceShapes, Math.Min(_tree.Order.Length, (piece + 1) * PieceShapes));
+                    missing[piece] = walker.FindMissing(piece);
                 }
             }
             else
@@ -90,7 +94,7 @@ internal sealed class VertexGroupExtraction
                     () => new ArcWalker(this),
                     (piece, _, own) =>
                     {
-                        missing[piece] = own.FindMissing(piece * PieceShapes, Math.Min(_tree.Order.Length, (piece + 1) * PieceShapes));
+                        missing[piece] = own.FindMissing(piece);
                         return own;
                     },
                     _ => { });
@@ -102,7 +106,7 @@ internal sealed class VertexGroupExtraction
                 {
                     if (Examine(walker, shape, step))
                     {
-                        _group.Complete(_tree.Order.Length > PieceShapes);
+                        _group.Complete(isForMany);
                     }
                 }
 
@@ -112,9 +116,6 @@ internal sealed class VertexGroupExtraction
 
         return new VertexGroup(_groupoid, _tree, _group.ToGroup(), _arcs.DrainToImmutable());
     }
-
-    // Pieces between which the group may grow: a few at first, for there it may be that something is still missing. Depends on the number of pieces alone.
-    private static int RoundOf(int pieces) => Math.Clamp(pieces / 16, 1, 256);
 
     // Adds the loop over an arc unless the group holds it.
     private bool Examine(ArcWalker walker, int shape, int step)
@@ -165,10 +166,12 @@ internal sealed class VertexGroupExtraction
             return _loop;
         }
 
-        /// <summary>The arcs from some shapes of the tree's order whose loops the group does not hold.</summary>
+        /// <summary>The arcs from the shapes of a piece whose loops the group does not hold.</summary>
         [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-        public List<(int Shape, int Step)> FindMissing(int first, int end)
+        public List<(int Shape, int Step)> FindMissing(int piece)
         {
+            var first = piece * PieceShapes;
+            var end = Math.Min(_owner._tree.Order.Length, first + PieceShapes);
             var missing = new List<(int Shape, int Step)>();
             var steps = _owner._arcSteps;
             for (var start = first; start < end; start += Batch)

@@ -15,7 +15,7 @@ namespace Fusecraft.Groupoids;
 /// </summary>
 internal sealed partial class WindowMembership
 {
-    private const int Window = 32;
+    private const int Window = WindowRows.WindowSize;
 
     /// <summary>More combinations of signs and twists are not listed.</summary>
     private const int MostCodes = 1 << 20;

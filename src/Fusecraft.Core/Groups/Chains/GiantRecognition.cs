@@ -85,23 +85,10 @@ internal static class GiantRecognition
 
             if (2 * length > points && length < points - 2)
             {
-                return IsPrime(length);
+                return FactoredInteger.IsPrime(length);
             }
         }
 
         return false;
-    }
-
-    private static bool IsPrime(int number)
-    {
-        for (var divisor = 2; divisor <= number / divisor; divisor++)
-        {
-            if (number % divisor == 0)
-            {
-                return false;
-            }
-        }
-
-        return number > 1;
     }
 }

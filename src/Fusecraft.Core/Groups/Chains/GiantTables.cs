@@ -142,32 +142,13 @@ internal sealed class GiantTables : ChainTables
             unused.Remove(images[_order[level]]);
         }
 
-        if (_isAlternating && IsOdd(images[..Degree]))
+        if (_isAlternating && Lanes.IsOdd(images[..Degree]))
         {
             (images[_order[^1]], images[_order[^2]]) = (images[_order[^2]], images[_order[^1]]);
         }
     }
 
     public override ChainTables Below(int level) => new GiantTables(Degree, _order[level..], _isAlternating);
-
-    // A permutation is even when points and cycles differ by an even number.
-    private static bool IsOdd(ReadOnlySpan<int> images)
-    {
-        using var scratch = new Scratch<bool>(images.Length);
-        var seen = scratch.Span;
-        seen.Clear();
-        var isOdd = false;
-        for (var start = 0; start < images.Length; start++)
-        {
-            for (var point = start; !seen[point]; point = images[point])
-            {
-                seen[point] = true;
-                isOdd ^= images[point] != start;
-            }
-        }
-
-        return isOdd;
-    }
 
     // Any base point to come that is neither the level's own nor the given one; the last two are never both taken.
     private int ThirdPoint(int point) => point == _order[^1] ? _order[^2] : _order[^1];

@@ -113,19 +113,7 @@ internal sealed class OrbitParts
     /// <summary>True when a generator exchanges the parts by an odd permutation.</summary>
     public bool IsOddExchange(int generator)
     {
-        var seen = new bool[_frames.Length];
-        var isOdd = false;
-        for (var start = 0; start < seen.Length; start++)
-        {
-            for (var part = start; !seen[part];)
-            {
-                seen[part] = true;
-                part = _partOf[_generators[generator][_frames[part][0]]];
-                isOdd ^= part != start;
-            }
-        }
-
-        return isOdd;
+        return Lanes.IsOdd(Array.ConvertAll(_frames, frame => _partOf[_generators[generator][frame[0]]]));
     }
 
     // From the first part by its frame to a part, by the generator to the next part, and back by that one's frame.

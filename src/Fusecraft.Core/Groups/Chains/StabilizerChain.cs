@@ -54,7 +54,7 @@ public sealed class StabilizerChain
     /// <summary>True when the base points ascend, so that the digits along the base count members in lexicographic order of image lists.</summary>
     internal bool IsLexicographic { get; }
 
-    /// <summary>Builds a chain of a group: Schreier-Sims with random elements, then proven by sifting every Schreier generator.</summary>
+    /// <summary>Builds a chain of a group: Schreier-Sims with random elements, then proven by a bound that the order meets, or by sifting every Schreier generator. Giants are recognised and need no search.</summary>
     /// <param name="group">Any group.</param>
     /// <param name="options">Default: base 0, 1, 2, … and proven.</param>
     /// <param name="cancellationToken">Ends the work early.</param>

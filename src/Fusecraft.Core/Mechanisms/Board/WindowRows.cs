@@ -10,7 +10,8 @@ namespace Fusecraft.Mechanisms;
 /// </summary>
 internal sealed class WindowRows : SiteRows
 {
-    private const int WindowSize = 32;
+    /// <summary>Bytes from the start of a window that are read and written at once; the most that an orbit may have.</summary>
+    public const int WindowSize = 32;
 
     // For each site: its byte in a row (its counterpart's, where its orbit is not held), or -1; where its window starts; and its own orbit's sites by the bytes of the window.
     private readonly int[] _byteOf;
