@@ -4,13 +4,13 @@ using System.Runtime.InteropServices;
 namespace Fusecraft.Solving;
 
 /// <summary>
-/// Breadth-first search that fills a <see cref="ResidueTable"/>. Small levels are lists of states whose neighbours are looked up one by one. In large ones each row that is not full asks the rows of its neighbours
+/// Breadth-first search that fills a <see cref="ResidueTable"/>. The first levels are lists of states whose neighbours are looked up one by one. In later ones each row that is not full asks the rows of its neighbours
 /// whose states were reached last, a word at a time; so a thread writes its own rows only, and the outcome does not depend on the threads.
 /// </summary>
 internal sealed class ResidueSearch
 {
-    /// <summary>A level with fewer than one in so many states is a list.</summary>
-    private const int ListShare = 256;
+    /// <summary>The first levels, as long as they have fewer than one in so many states, are lists.</summary>
+    private const int ListShare = 2048;
     private const int RowsAPiece = 16;
     private readonly RowTable _moves;
     private readonly ResidueTable _table;
@@ -59,7 +59,8 @@ internal sealed class ResidueSearch
             Reach(state, 0, level);
         }
 
-        var list = level;
+        // Older states of the same residue are asked along with the last level's; they bring nothing new. So a list once given up cannot be had again.
+        List<long>? list = level;
         for (long count = level.Count; count > 0;)
         {
             _counts.Add(count);
@@ -68,9 +69,9 @@ internal sealed class ResidueSearch
             _options.CancellationToken.ThrowIfCancellationRequested();
             (_holdsLast, _holdsNext) = (_holdsNext, _holdsLast);
             _holdsNext.AsSpan().Clear();
-            if (count * ListShare < _moves.StateCount)
+            if (list is not null && count * ListShare < _moves.StateCount)
             {
-                list = Expand(list ?? LastLevel());
+                list = Expand(list);
                 count = list.Count;
             }
             else
@@ -81,6 +82,7 @@ internal sealed class ResidueSearch
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private List<long> Expand(List<long> level)
     {
         var next = new List<long>();
@@ -114,30 +116,6 @@ internal sealed class ResidueSearch
             _holdsNext[row] = 1;
             level.Add(state);
         }
-    }
-
-    private List<long> LastLevel()
-    {
-        var level = new List<long>();
-        var bits = new uint[_table.RowElements];
-        for (var row = 0; row < _moves.RowCount; row++)
-        {
-            if (_holdsLast[row] == 0)
-            {
-                continue;
-            }
-
-            _table.CopyBits(row, ResidueTable.CodeOf(_counts.Count - 1), bits);
-            for (var within = 0; within < _moves.RowStates; within++)
-            {
-                if (((bits[within >> 5] >> (within & 31)) & 1) != 0)
-                {
-                    level.Add(((long)row * _moves.RowStates) + within);
-                }
-            }
-        }
-
-        return level;
     }
 
     private long Pull()
