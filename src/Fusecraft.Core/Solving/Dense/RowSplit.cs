@@ -43,6 +43,20 @@ internal readonly record struct RowSplit(int RowLevels, int WordLevels)
         return new RowSplit(rowLevels, wordLevels);
     }
 
+    /// <summary>The number of rows, the states of one, and at most how many entries maps of words have.</summary>
+    public (long Rows, int RowStates, long MapEntries) Sizes(IReadOnlyList<int> orbitLengths, int shapes, int slots)
+    {
+        var (rows, rowStates, wordStates) = ((long)shapes, 1, 1);
+        for (var level = 0; level < orbitLengths.Count; level++)
+        {
+            rows *= level < RowLevels ? orbitLengths[level] : 1;
+            rowStates *= level < RowLevels ? 1 : orbitLengths[level];
+            wordStates *= level < WordLevels ? 1 : orbitLengths[level];
+        }
+
+        return (rows, rowStates, Math.Min(rowStates, rows * slots) * (rowStates / wordStates));
+    }
+
     // A look-up for the word and one for each byte of its bits; tables for more than two bytes leave the nearest memory.
     private static double WordCost(int states) => (1 + (states > 16 ? 0.6 : 0.4) * ((states + 7) / 8)) / states;
 }

@@ -17,6 +17,9 @@ internal abstract class StateDigits
     /// <summary>The labels of the state of this number at a place.</summary>
     public abstract Permutation Unrank(int place, long number);
 
+    /// <summary>The permutation τ of the path to the shape at a place.</summary>
+    public abstract Permutation Path(int place);
+
     /// <summary>Works out what moves do to rows of states.</summary>
     public abstract RowTable Tabulate(MoveSet moves, RowSplit split, int threads, CancellationToken cancellation);
 
@@ -74,6 +77,8 @@ internal sealed class StateDigits<T> : StateDigits
         Lanes.ComposePadded<T>(member.Span, Label(_labels, place), scratch.Span);
         return Permutation.FromTrustedImages<T>(scratch.Span);
     }
+
+    public override Permutation Path(int place) => Permutation.FromTrustedImages(Label(_labels, place));
 
     public override RowTable Tabulate(MoveSet moves, RowSplit split, int threads, CancellationToken cancellation)
     {

@@ -22,15 +22,14 @@ public sealed class StateNumbering
     private readonly long _order;
     private readonly Permutation _base;
 
-    private StateNumbering(VertexGroup group, int threads)
+    private StateNumbering(VertexGroup group)
     {
         Group = group;
         _region = new RegionShapes(group.Groupoid, group.BaseShape);
         _order = (long)group.Order;
         Digits = StateDigits.Create(_region, group.Group.Chain);
-        Threads = threads;
         _base = group.Groupoid.PathTo(group.BaseShape).Permutation;
-        _steps = new Lazy<RowTable>(() => Tabulate(MoveSet.Of(_region, Metric.Step, default), default));
+        _steps = new Lazy<RowTable>(() => Tabulate(MoveSet.Of(_region, Metric.Step, default), group.Groupoid.DegreeOfParallelism, default));
     }
 
     /// <summary>The vertex group whose members make the states of the base shape.</summary>
@@ -48,8 +47,6 @@ public sealed class StateNumbering
     internal RegionShapes Region => _region;
 
     internal StateDigits Digits { get; }
-
-    internal int Threads { get; }
 
     /// <summary>Numbers the states of the home region.</summary>
     /// <param name="mechanism">The mechanism; it is explored and its vertex group at home computed.</param>
@@ -69,7 +66,7 @@ public sealed class StateNumbering
     {
         ArgumentNullException.ThrowIfNull(group);
         return group.StateCount <= long.MaxValue
-            ? new StateNumbering(group, group.Groupoid.DegreeOfParallelism)
+            ? new StateNumbering(group)
             : throw new InvalidOperationException($"The region has {group.StateCount} states; only up to {long.MaxValue} can be numbered.");
     }
 
@@ -118,8 +115,17 @@ public sealed class StateNumbering
     /// <summary>The table of steps, a slot each; made at the first call.</summary>
     internal RowTable StepTable => _steps.Value;
 
-    internal RowTable Tabulate(MoveSet moves, CancellationToken cancellation) =>
-        Digits.Tabulate(moves, RowSplit.For(Digits.OrbitLengths, ShapeCount, moves.Width), Threads, cancellation);
+    /// <summary>The labels of the base state.</summary>
+    internal Permutation BaseLabels => _base;
+
+    /// <summary>The permutation τ of the tree path from the base shape to the shape at a place.</summary>
+    internal Permutation PathTo(int place) => Digits.Path(place);
+
+    /// <summary>The number of the state with the labels <c>b * reached</c>, where the permutation reached is that of a path from the base shape to the shape at a place.</summary>
+    internal long Number(int place, Permutation reached) => (place * _order) + Digits.Rank(place, reached);
+
+    internal RowTable Tabulate(MoveSet moves, int threads, CancellationToken cancellation) =>
+        Digits.Tabulate(moves, RowSplit.For(Digits.OrbitLengths, ShapeCount, moves.Width), threads, cancellation);
 
     private void RequireNumber(long number)
     {

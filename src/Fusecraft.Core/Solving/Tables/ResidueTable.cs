@@ -1,6 +1,5 @@
 using System.Numerics;
 using System.Runtime.CompilerServices;
-using Fusecraft.Groupoids;
 
 namespace Fusecraft.Solving;
 
@@ -15,14 +14,14 @@ namespace Fusecraft.Solving;
 internal sealed class ResidueTable
 {
     public const int StatesPerElement = 32;
-    private readonly ulong[] _elements;
+    private readonly TableMemory _elements;
 
     public ResidueTable(int rowCount, int rowStates)
-        : this(rowCount, rowStates, HugePages.AllocateZeroed<ulong>(checked(rowCount * ElementsOf(rowStates))))
+        : this(rowCount, rowStates, TableMemory.Allocate(BytesFor(rowCount, rowStates)))
     {
     }
 
-    public ResidueTable(int rowCount, int rowStates, ulong[] elements)
+    public ResidueTable(int rowCount, int rowStates, TableMemory elements)
     {
         RowStates = rowStates;
         RowElements = ElementsOf(rowStates);
@@ -37,9 +36,12 @@ internal sealed class ResidueTable
     /// <summary>The elements that hold a row.</summary>
     public int RowElements { get; }
 
-    public ulong[] Elements => _elements;
+    public TableMemory Memory => _elements;
 
-    public static int ElementsOf(int rowStates) => (rowStates + StatesPerElement - 1) / StatesPerElement;
+    /// <summary>The bytes that a table takes.</summary>
+    public static long BytesFor(long rowCount, int rowStates) => rowCount * ElementsOf(rowStates) * sizeof(ulong);
+
+    private static int ElementsOf(int rowStates) => (rowStates + StatesPerElement - 1) / StatesPerElement;
 
     /// <summary>The code of states at a distance.</summary>
     public static int CodeOf(int distance) => 1 + (distance % 3);
@@ -47,19 +49,19 @@ internal sealed class ResidueTable
     /// <summary>The code of the distance one less.</summary>
     public static int Before(int code) => code == 1 ? 3 : code - 1;
 
-    public Span<ulong> Row(int row) => _elements.AsSpan(row * RowElements, RowElements);
+    public Span<ulong> Row(int row) => _elements.Slice<ulong>((long)row * RowElements, RowElements);
 
     /// <summary>The code of a state; 0 where it was not reached.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public int Code(long row, int within)
     {
-        var element = _elements[(row * RowElements) + (within >> 5)] >> (within & 31);
+        var element = _elements.At<ulong>((row * RowElements) + (within >> 5)) >> (within & 31);
         return (int)((element & 1) | ((element >> 31) & 2));
     }
 
     /// <summary>Gives a state that was not reached its code.</summary>
     public void Set(long row, int within, int code) =>
-        _elements[(row * RowElements) + (within >> 5)] |= (((ulong)code & 1) | (((ulong)code >> 1) << 32)) << (within & 31);
+        _elements.At<ulong>((row * RowElements) + (within >> 5)) |= (((ulong)code & 1) | (((ulong)code >> 1) << 32)) << (within & 31);
 
     /// <summary>Writes a bit for each state of a row: those of a code.</summary>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
