@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using System.Numerics;
 using Fusecraft.Groupoids;
 using Fusecraft.Mechanisms;
+using Fusecraft.Permutations;
 
 namespace Fusecraft.Solving;
 
@@ -102,7 +103,10 @@ public sealed partial class DistanceTable : IDisposable
         var slots = Math.Max(1, numbering.Mechanism.Steps.Length) * (HasReverses(numbering.Mechanism, options.Metric) ? 1 : 2);
         var (rows, rowStates, maps) = RowSplit.For(numbering.Digits.OrbitLengths, numbering.ShapeCount, slots).Sizes(numbering.Digits.OrbitLengths, numbering.ShapeCount, slots);
         var distances = HasReverses(numbering.Mechanism, options.Metric) ? ResidueTable.BytesFor(rows, rowStates) : states;
-        return distances + (rows * ((8L * slots) + 6)) + (4L * maps);
+
+        // Rows and shapes each know where every move leads; shapes also have the permutations of their paths, to and fro.
+        var labels = 2L * Lanes.PaddedLength(numbering.Mechanism.SiteCount) * (numbering.Mechanism.SiteCount > 256 ? 2 : 1);
+        return distances + (rows * ((8L * slots) + 6)) + (4L * maps) + (numbering.ShapeCount * ((8L * slots) + labels));
     }
 
     /// <summary>The distance of a state; -1 where it has none.</summary>
