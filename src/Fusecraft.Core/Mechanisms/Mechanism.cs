@@ -15,6 +15,7 @@ public sealed partial class Mechanism
     private readonly Lazy<ShapeBoard> _board;
     private readonly Lazy<PermutationGroup> _unguardedGroup;
     private readonly Lazy<StepNames> _stepNames;
+    private readonly Lazy<CubeNames?> _cubeNames;
     private readonly Lazy<SiteMover> _siteMover;
     private readonly Lazy<SiteRows> _siteRows;
 
@@ -59,6 +60,7 @@ public sealed partial class Mechanism
         _siteMover = new Lazy<SiteMover>(() => SiteMover.Of(this));
         _siteRows = new Lazy<SiteRows>(() => Mechanisms.SiteRows.Of(this));
         _stepNames = new Lazy<StepNames>(() => new StepNames(Steps));
+        _cubeNames = new Lazy<CubeNames?>(() => Definition.Family is CubeFamily cube ? new CubeNames(cube.Size, Turns) : null);
         _unguardedGroup = new Lazy<PermutationGroup>(() => PermutationGroup.Generate(Turns.Select(turn => turn.Permutation), SiteCount));
     }
 
