@@ -12,6 +12,7 @@ namespace Fusecraft.Mechanisms;
 public sealed partial class Mechanism
 {
     private readonly NameTable _names;
+    private readonly ImmutableArray<string> _faceNames;
     private readonly Lazy<ShapeBoard> _board;
     private readonly Lazy<PermutationGroup> _unguardedGroup;
     private readonly Lazy<StepNames> _stepNames;
@@ -36,6 +37,7 @@ public sealed partial class Mechanism
         Adjacency = blueprint.Adjacency;
         _builtSymmetries = new Lazy<ImmutableArray<Permutation>>(() => blueprint.Symmetries?.Invoke() ?? []);
         ColourOfSite = colours;
+        _faceNames = definition.Colours.Kind == ColourSchemeKind.Faces ? blueprint.FaceNames : [];
         HomeBlocks = [.. blocks.Select(block => block.ToImmutableArray())];
         MarkNames = [.. marks.Select(mark => mark.Mark).Distinct()];
         HomeMarks = [.. marks];

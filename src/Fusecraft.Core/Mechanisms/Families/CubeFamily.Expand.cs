@@ -110,6 +110,7 @@ public sealed partial class CubeFamily
                 Adjacency = Adjacency(),
                 Symmetries = Symmetries,
                 Faces = [.. _sites.Select(site => site.Face)],
+                FaceNames = [.. FaceOrder.Select(face => $"{face}")],
                 Turns = [.. Turns()],
             };
         }
