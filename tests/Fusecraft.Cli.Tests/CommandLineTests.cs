@@ -14,7 +14,7 @@ public sealed partial class CommandLineTests : IDisposable
     [InlineData("Required command was not provided.")]
     [InlineData("There is no command 'frobnicate'.\n\n", "frobnicate", "--json")]
     [InlineData("Required argument 'FILE' missing for command: 'examine'.", "examine")]
-    [InlineData("Option '--from' is required.", "solve", "a.fuse.json")]
+    [InlineData("Give either --from or --colours.", "solve", "a.fuse.json")]
     [InlineData("Option '--to' is required.", "route", "a.fuse.json", "--from", "home")]
     [InlineData("Option '--word' is required.", "trace", "a.fuse.json")]
     [InlineData("Option '--output' is required.", "new", "cube")]
