@@ -18,6 +18,11 @@ public class LevelMeasuresTests
         var random = new SeededRandom(seed);
         var mechanism = WithGoal(RandomMechanisms.From(seed), random);
         var start = SolverTests.RandomStateIfFree(mechanism, random.NextInt32(9), seed + 1);
+        if (metric == "run" && SolverTests.Depths(start).Count > 1000)
+        {
+            return;
+        }
+
         Check(start, metric switch
         {
             "step" => Metric.Step,
