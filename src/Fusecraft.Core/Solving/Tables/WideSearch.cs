@@ -58,8 +58,9 @@ internal sealed class WideSearch<T>
             _distances.At<T>(state) = T.Zero;
         }
 
-        int[] costs = [.. _moves.Moves.Select(move => move.Cost).Distinct().Order()];
-        var greatest = costs.Length == 0 ? 0 : costs[^1];
+        // Without any move the states at distance 0 are to be counted all the same.
+        int[] costs = _moves.Moves.IsEmpty ? [1] : [.. _moves.Moves.Select(move => move.Cost).Distinct().Order()];
+        var greatest = costs[^1];
         var reached = 0L;
         for (var (distance, empty) = (0, 0); empty <= greatest; distance++)
         {
