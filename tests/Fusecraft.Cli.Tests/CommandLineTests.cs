@@ -55,7 +55,7 @@ public sealed partial class CommandLineTests : IDisposable
     {
         var outcome = await _bench.RunAsync("--help");
 
-        Assert.Equal(["new", "schema", "check", "examine", "compare", "route", "solve", "trace"], ListedCommand().Matches(outcome.Output).Select(match => match.Groups[1].Value));
+        Assert.Equal(["new", "schema", "check", "examine", "compare", "route", "solve", "trace", "depths", "scramble", "loops"], ListedCommand().Matches(outcome.Output).Select(match => match.Groups[1].Value));
         Assert.Equal(ExitCodes.Done, outcome.Code);
     }
 

@@ -67,7 +67,7 @@ internal sealed class LoopWays<T>
     public int LevelCount => _levels.Count;
 
     /// <summary>True when nothing is left beyond the levels.</summary>
-    public bool IsExhausted => _waiting.Skip(LevelCount).All(level => level.TrueForAll(way => _ways[way].IsDone));
+    public bool IsExhausted => LevelCount > 0 && _levels[^1].Count == 0 && _waiting.Skip(LevelCount).All(level => level.TrueForAll(way => _ways[way].IsDone));
 
     /// <summary>The ways of a cost; none for one beyond all levels.</summary>
     public List<int> Level(int cost) => cost < LevelCount ? _levels[cost] : [];
@@ -81,12 +81,20 @@ internal sealed class LoopWays<T>
     public bool TryGrow(int maxWays, CancellationToken cancellation)
     {
         var cost = LevelCount;
-        var level = new List<int>();
-
-        // Steps of weight 0 add to the level while it is gone through.
-        for (var i = 0; cost < _waiting.Count && i < _waiting[cost].Count; i++)
+        foreach (var way in cost > 0 ? _levels[cost - 1] : [])
         {
             cancellation.ThrowIfCancellationRequested();
+            Extend(way, cost - 1, isFree: false);
+            if (Count > maxWays)
+            {
+                return false;
+            }
+        }
+
+        // Steps of weight 0 add to the level while it is gone through.
+        var level = new List<int>();
+        for (var i = 0; cost < _waiting.Count && i < _waiting[cost].Count; i++)
+        {
             var way = _waiting[cost][i];
             if (_ways[way].IsDone)
             {
@@ -95,11 +103,7 @@ internal sealed class LoopWays<T>
 
             _ways[way] = _ways[way] with { IsDone = true };
             level.Add(way);
-            for (var c = 0; c < _classes.Length; c++)
-            {
-                Extend(way, _classes[c], cost + _weights[c]);
-            }
-
+            Extend(way, cost, isFree: true);
             if (Count > maxWays)
             {
                 return false;
@@ -125,6 +129,17 @@ internal sealed class LoopWays<T>
         }
 
         return steps;
+    }
+
+    private void Extend(int way, int cost, bool isFree)
+    {
+        for (var c = 0; c < _classes.Length; c++)
+        {
+            if (_weights[c] == 0 == isFree)
+            {
+                Extend(way, _classes[c], cost + _weights[c]);
+            }
+        }
     }
 
     // One step, or all that a run can do.
