@@ -27,6 +27,31 @@ public sealed class RouteAndSolveCommandTests : IDisposable
     }
 
     [Fact]
+    public async Task A_state_may_be_given_by_its_colours()
+    {
+        var cube = _bench.Write("colours.fuse.json", """
+            { "format": "fusecraft/mechanism/1", "name": "Coloured", "family": { "kind": "cube", "size": 2 }, "goal": "colours", "colours": "faces" }
+            """);
+
+        var solved = await _bench.RunAsync("solve", cube, "--colours", "UFR:U=F UFR:F=R UFR:R=U UFL:U=F UFL:F=L UFL:L=U");
+        var twisted = await _bench.RunAsync("solve", cube, "--colours", "UFR:U=F UFR:F=R UFR:R=U");
+
+        Assert.Equal(ExitCodes.Done, solved.Code);
+        Assert.Equal(
+            new Workbench.Outcome(ExitCodes.Negative, "There is no such way. No member of the vertex group (order 3674160) brings the colours there.\n", ""), twisted);
+        Assert.Equal(ExitCodes.BadInput, (await _bench.RunAsync("solve", cube, "--colours", "UFR:U=Q")).Code);
+    }
+
+    [Fact]
+    public async Task A_state_and_its_colours_are_not_given_together()
+    {
+        Assert.Equal(ExitCodes.Usage, (await _bench.RunAsync("solve", _board)).Code);
+        var both = await _bench.RunAsync("solve", _board, "--from", "home", "--colours", "home");
+        Assert.Equal(ExitCodes.Usage, both.Code);
+        Assert.StartsWith("Give either --from or --colours.", both.Error, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public async Task A_solution_as_json_is_one_line() => Assert.Equal(
         new Workbench.Outcome(
             ExitCodes.Done, """{"solvable":true,"word":"R U L","length":3,"provenShortest":true,"reason":"A search over all shorter paths found none."}""" + "\n", ""),

@@ -53,7 +53,7 @@ internal static class GoalStates
         }
     }
 
-    private static ulong[]? MarkMask(Mechanism mechanism) => mechanism.Board.MaskOf(
+    internal static ulong[]? MarkMask(Mechanism mechanism) => mechanism.Board.MaskOf(
         mechanism.Goal.Names.Select(name => (name[..name.IndexOf('@', StringComparison.Ordinal)], mechanism.FindSite(name[(name.IndexOf('@', StringComparison.Ordinal) + 1)..])!.Value)));
 
     private static bool IsHome(StateNumbering numbering, int place) => numbering.Group.Groupoid.ShapeAt(numbering.Region.ShapeAt(place)) == numbering.Mechanism.Home;
@@ -72,7 +72,7 @@ internal static class GoalStates
         }
     }
 
-    private static bool Covers(ReadOnlySpan<ulong> key, ulong[] mask)
+    internal static bool Covers(ReadOnlySpan<ulong> key, ulong[] mask)
     {
         for (var i = 0; i < mask.Length; i++)
         {
