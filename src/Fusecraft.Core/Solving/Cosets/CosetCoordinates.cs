@@ -108,6 +108,8 @@ public sealed class CosetCoordinates
         return OfColouring(mechanism, ColoursOfPieces(mechanism, pieces), options, cancellationToken);
     }
 
+    internal int[] StepArray => _stepTable;
+
     /// <summary>The coordinate after a step; -1 where there is none.</summary>
     /// <exception cref="ArgumentOutOfRangeException">There is no such coordinate.</exception>
     /// <exception cref="ArgumentException">The step belongs to another mechanism.</exception>
