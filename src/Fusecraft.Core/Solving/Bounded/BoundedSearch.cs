@@ -184,13 +184,13 @@ public sealed class BoundedSearch
         if (!_tables.TryGetValue(goal, out var tables))
         {
             List<PruningTable> own = [.. Options.Tables.Where(table => table.BaseShape == goal && IsSameMetric(table.Metric))];
+            List<MechanismSymmetry?> symmetries = Options.UsesSymmetry ? BoundTables.SymmetriesFor(goal, Options.Metric, cancellation) : [null];
             if (own.Count == 0)
             {
                 progress?.Report(new SolveProgress("building tables", 0));
-                own = PruningChoice.Build(goal, Options.Metric, Options.Pruning, cancellation);
+                own = PruningChoice.Build(goal, Options.Metric, Options.Pruning, symmetries, cancellation);
             }
 
-            List<MechanismSymmetry?> symmetries = Options.UsesSymmetry ? BoundTables.SymmetriesFor(goal, Options.Metric, cancellation) : [null];
             tables = new BoundTables(own, symmetries);
             _tables.Add(goal, tables);
         }

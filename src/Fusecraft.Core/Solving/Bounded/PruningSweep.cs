@@ -150,6 +150,7 @@ internal sealed class PruningSweep<TCells>
     {
         var outer = row.Outer;
         var before = _inner.Before[step];
+        var isWhole = true;
         row.Start.AsSpan(0, count).CopyTo(row.At);
         for (var j = 0; j < length; j++)
         {
@@ -159,15 +160,23 @@ internal sealed class PruningSweep<TCells>
                 return false;
             }
 
+            // Where one part alone knows of shapes, it alone may be barred.
             var start = (long)outer * _inner.Count;
             foreach (ref var inner in row.At.AsSpan(0, count))
             {
-                inner = before[inner];
-                SetIfUnseen(start + inner, distance + 1);
+                inner = inner < 0 ? -1 : before[inner];
+                if (inner < 0)
+                {
+                    isWhole = false;
+                }
+                else
+                {
+                    SetIfUnseen(start + inner, distance + 1);
+                }
             }
         }
 
-        return true;
+        return isWhole;
     }
 
     private void SetIfUnseen(long entry, int distance)
@@ -213,6 +222,7 @@ internal sealed class PruningSweep<TCells>
     {
         var outer = row.Outer;
         var after = _inner.After[step];
+        var isWhole = true;
         row.Start.AsSpan(0, left).CopyTo(row.At);
         for (var j = 0; j < length; j++)
         {
@@ -225,9 +235,9 @@ internal sealed class PruningSweep<TCells>
             var start = (long)outer * _inner.Count;
             for (var i = left - 1; i >= 0; i--)
             {
-                // Pairs that belong to no state may have a barred step in one part alone.
                 var inner = row.At[i] < 0 ? -1 : after[row.At[i]];
                 row.At[i] = inner;
+                isWhole &= inner >= 0;
                 if (inner >= 0 && _cells.Get(start + inner) == distance)
                 {
                     row.At[i] = row.At[left - 1];
@@ -236,7 +246,7 @@ internal sealed class PruningSweep<TCells>
             }
         }
 
-        return true;
+        return isWhole;
     }
 
     private void Found(Row row, ref int left, int i, int distance)

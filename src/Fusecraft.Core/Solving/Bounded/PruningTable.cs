@@ -105,8 +105,7 @@ public sealed partial class PruningTable
         ArgumentOutOfRangeException.ThrowIfLessThan(options.DegreeOfParallelism, 1, nameof(options));
         RequireFit(first, second, metric);
 
-        // The inner coordinate is the smaller one: its rows stay in the processor's caches.
-        var (outer, inner) = second is not null && second.Count > first.Count ? (second, first) : (first, second);
+        var (outer, inner) = Ordered(first, second);
         var moves = new PruningMoves(first.Mechanism, metric);
         var entries = (long)outer.Count * (inner?.Count ?? 1);
         var isNarrow = moves.IsUniform && entries > MostByteEntries;

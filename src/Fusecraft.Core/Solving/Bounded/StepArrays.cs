@@ -47,9 +47,9 @@ internal sealed class StepArrays
     // Steps move shapes and colours one to one, so no two coordinates have the same one after a step.
     private static int[] Reversed(Step step, int[][] after)
     {
-        if (step.Turn.IsReversible)
+        if (step.Turn.IsReversible && step.Opposite is { } opposite)
         {
-            return after[step.Opposite!.Index];
+            return after[opposite.Index];
         }
 
         var before = new int[after[step.Index].Length];

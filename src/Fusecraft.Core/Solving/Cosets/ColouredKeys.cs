@@ -15,6 +15,7 @@ internal sealed class ColouredKeys
     private readonly int[] _colours;
     private readonly int _boardWords;
     private readonly bool _hasSlots;
+    private readonly bool _ignoresShapes;
     private readonly List<Dictionary<string, int>> _patterns = [];
     private readonly (int Word, int Shift, int Bits)[] _fields;
     private readonly StepFields[] _forward;
@@ -22,11 +23,13 @@ internal sealed class ColouredKeys
 
     /// <param name="mechanism">The mechanism.</param>
     /// <param name="colourOfLabel">For each label, by its home site, its colour: any number.</param>
-    public ColouredKeys(Mechanism mechanism, ReadOnlySpan<int> colourOfLabel)
+    /// <param name="ignoresShapes">True to leave shapes out, and to take every step for free.</param>
+    public ColouredKeys(Mechanism mechanism, ReadOnlySpan<int> colourOfLabel, bool ignoresShapes = false)
     {
+        _ignoresShapes = ignoresShapes;
         _mechanism = mechanism;
         _colours = Dense(colourOfLabel);
-        _boardWords = mechanism.Board.Words;
+        _boardWords = ignoresShapes ? 0 : mechanism.Board.Words;
         _hasSlots = mechanism.Board.SlotCount > 0;
         FindPatterns();
         _fields = new (int, int, int)[mechanism.PieceCount];
@@ -42,7 +45,7 @@ internal sealed class ColouredKeys
     public bool TryPack(ReadOnlySpan<ulong> shape, Permutation labels, Span<ulong> key)
     {
         key.Clear();
-        shape.CopyTo(key);
+        shape[.._boardWords].CopyTo(key);
         var colourOn = new int[_mechanism.SiteCount];
         for (var label = 0; label < colourOn.Length; label++)
         {
@@ -70,19 +73,22 @@ internal sealed class ColouredKeys
     public bool TryMove<TWidth>(int step, ReadOnlySpan<ulong> key, Span<ulong> next)
         where TWidth : struct, IShapeWidth
     {
-        var moves = _mechanism.Board.Moves[step];
-        if (!moves.IsFree(key[.._boardWords]))
+        if (!_ignoresShapes)
         {
-            return false;
-        }
+            var moves = _mechanism.Board.Moves[step];
+            if (!moves.IsFree(key[.._boardWords]))
+            {
+                return false;
+            }
 
-        if (_hasSlots)
-        {
-            moves.Move(key[.._boardWords], next[.._boardWords]);
-        }
-        else
-        {
-            key[.._boardWords].CopyTo(next);
+            if (_hasSlots)
+            {
+                moves.Move(key[.._boardWords], next[.._boardWords]);
+            }
+            else
+            {
+                key[.._boardWords].CopyTo(next);
+            }
         }
 
         MoveFields<TWidth>(_forward[step], key, next);
@@ -94,19 +100,22 @@ internal sealed class ColouredKeys
     public bool TryMoveBack<TWidth>(int step, ReadOnlySpan<ulong> key, Span<ulong> previous)
         where TWidth : struct, IShapeWidth
     {
-        var moves = _mechanism.Board.Moves[step];
-        if (_hasSlots)
+        if (!_ignoresShapes)
         {
-            moves.MoveBack(key[.._boardWords], previous[.._boardWords]);
-        }
-        else
-        {
-            key[.._boardWords].CopyTo(previous);
-        }
+            var moves = _mechanism.Board.Moves[step];
+            if (_hasSlots)
+            {
+                moves.MoveBack(key[.._boardWords], previous[.._boardWords]);
+            }
+            else
+            {
+                key[.._boardWords].CopyTo(previous);
+            }
 
-        if (!moves.IsFree(previous[.._boardWords]))
-        {
-            return false;
+            if (!moves.IsFree(previous[.._boardWords]))
+            {
+                return false;
+            }
         }
 
         MoveFields<TWidth>(_backward[step], key, previous);
@@ -201,7 +210,7 @@ internal sealed class ColouredKeys
     // Behind the slots of the last word of the shape, unless a condition in code reads those words whole.
     private int PlaceFields()
     {
-        var free = _mechanism.Board.SlotCount;
+        var free = _ignoresShapes ? 0 : _mechanism.Board.SlotCount;
         foreach (var moves in _mechanism.Board.Moves)
         {
             free = moves.HasConditions ? 64 * _boardWords : free;
@@ -219,7 +228,7 @@ internal sealed class ColouredKeys
             free += bits;
         }
 
-        var words = Math.Max(_boardWords, (free + 63) / 64);
+        var words = Math.Max(Math.Max(1, _boardWords), (free + 63) / 64);
         return words <= 8 ? (int)BitOperations.RoundUpToPowerOf2((uint)words) : words;
     }
 

@@ -26,6 +26,7 @@ public sealed class CosetCoordinates
         ColourOfLabel = colours;
         BaseShape = options.BaseShape ?? mechanism.Home;
         TowardsBase = options.TowardsBase;
+        IgnoresShapes = options.IgnoresShapes;
         _keys = keys;
         _store = store;
         _stepTable = stepTable;
@@ -42,6 +43,9 @@ public sealed class CosetCoordinates
 
     /// <summary>True where the coordinates are those from which coordinate 0 can be reached; false where they are those that can be reached from it.</summary>
     public bool TowardsBase { get; }
+
+    /// <summary>True where shapes are left out and every step counts as free.</summary>
+    public bool IgnoresShapes { get; }
 
     /// <summary>The number of coordinates.</summary>
     public int Count => _store.Count;
@@ -80,7 +84,7 @@ public sealed class CosetCoordinates
             throw new ArgumentException($"The base shape belongs to the mechanism {shape.Mechanism.Name}, not to {mechanism.Name}.", nameof(options));
         }
 
-        var keys = new ColouredKeys(mechanism, colourOfLabel);
+        var keys = new ColouredKeys(mechanism, colourOfLabel, options.IgnoresShapes);
         var run = new CosetEnumeration(mechanism, keys, options, cancellationToken);
         var isComplete = keys.Words switch
         {

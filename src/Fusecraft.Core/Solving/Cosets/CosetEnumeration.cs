@@ -24,7 +24,7 @@ internal sealed class CosetEnumeration
         _cancellation = cancellation;
         _steps = mechanism.Steps.Length;
         _most = Math.Min(options.MaxCoordinates, Array.MaxLength / Math.Max(1, _steps));
-        _undoes = [.. mechanism.Steps.Select(step => step.Turn.IsReversible ? step.Opposite!.Index : -1)];
+        _undoes = [.. mechanism.Steps.Select(step => step.Turn.IsReversible || (options.IgnoresShapes && !step.Turn.IsOneWay) ? step.Opposite!.Index : -1)];
         Store = new ShapeStore(keys.Words);
     }
 

@@ -18,4 +18,9 @@ public sealed class CosetOptions
     /// True for the coordinates from which coordinate 0 can be reached, false for those that can be reached from it. There is a difference only where some step cannot be undone.
     /// </summary>
     public bool TowardsBase { get; init; }
+
+    /// <summary>
+    /// True to leave shapes out: coordinates are colourings alone, and every step counts as free. Bounds that rest on them are weaker, but there are fewer coordinates where there are many shapes.
+    /// </summary>
+    public bool IgnoresShapes { get; init; }
 }
