@@ -55,7 +55,8 @@ public class DepthCensusTests
         {
             var distances = NaiveDistances.From(mechanism.HomeState, metric);
             var census = DepthCensus.Take(mechanism.HomeState, 4, metric);
-            Assert.Equal(distances.Values.All(distance => distance <= 4), census.IsWhole);
+            Assert.True(!census.IsWhole || census.Counts.Sum() == distances.Count);
+            Assert.True(census.IsWhole || distances.Values.Max() >= 4);
             for (var i = 0; i < census.Counts.Length; i++)
             {
                 Assert.Equal(distances.Values.Count(distance => distance == i * census.Unit), census.Counts[i]);

@@ -13,10 +13,47 @@ public class BoundedSearchTests
     private static readonly Mechanism Cube = Make.Cube(3);
 
     [Fact]
-    public void Iterative_deepening_gives_every_distance_of_random_mechanisms_and_proves_every_bound_below_it() => RandomMechanisms.ForFixedSeeds(seed => CheckDistances(seed, 1));
+    public void Iterative_deepening_gives_every_distance_of_random_mechanisms_and_proves_every_bound_below_it() => CheckDistances(1);
 
     [Fact]
-    public void The_search_from_both_ends_does_so_too() => RandomMechanisms.ForFixedSeeds(seed => CheckDistances(seed, 200_000));
+    public void The_search_from_both_ends_does_so_too() => CheckDistances(200_000);
+
+    // The search from both ends, itself compared with trying everything, is the judge where there are too many states for that.
+    [Fact]
+    public void On_fused_cubes_iterative_deepening_agrees_with_the_search_from_both_ends()
+    {
+        foreach (var metric in (Metric[])[Metric.Step, Metric.Run])
+        {
+            foreach (var blocks in (string[][])[["UFR UF"], ["UFR UF", "DL DLB LB"]])
+            {
+                var mechanism = Make.Cube(3, "", blocks);
+                var pruning = new PruningOptions { MaxBytes = 1 << 20 };
+                var deepening = new BoundedSearch(mechanism, new BoundedOptions { Metric = metric, MaxMeetingStates = 1, Pruning = pruning });
+                var meeting = new BoundedSearch(mechanism, new BoundedOptions { Metric = metric, MaxMeetingStates = 10_000_000 });
+                var random = new SeededRandom(9);
+                for (var i = 0; i < 4; i++)
+                {
+                    var start = Walk(mechanism.HomeState, 20);
+                    var end = Walk(start, 7);
+                    var wanted = meeting.Find(start, end, 7);
+                    var found = deepening.Find(start, end, 7);
+                    Assert.Equal((BoundedOutcome.Found, wanted.LowerBound), (found.Outcome, found.LowerBound));
+                    Assert.Equal(BoundedOutcome.NoneWithinBound, deepening.Find(start, end, (int)wanted.LowerBound!.Value - 1).Outcome);
+                }
+
+                State Walk(State state, int steps)
+                {
+                    for (var k = 0; k < steps; k++)
+                    {
+                        var free = state.Shape!.FreeSteps();
+                        state = state.After(free[random.NextInt32(free.Length)]);
+                    }
+
+                    return state;
+                }
+            }
+        }
+    }
 
     // All pairs of a mechanism whose words are short and full of identities: nothing may be lost by leaving out redundant words.
     [Theory]
@@ -88,7 +125,6 @@ public class BoundedSearchTests
         Assert.Equal((timed.Outcome, timed.LowerBound, timed.NodeCount), (replayed.Outcome, replayed.LowerBound, replayed.NodeCount));
     }
 
-    // Six runs of the middle edges' flips: no word for two flipped edges is short; B11's neighbours are not needed for the proof.
     [Fact]
     public void An_element_of_the_vertex_group_is_a_shortest_loop()
     {
@@ -153,7 +189,14 @@ public class BoundedSearchTests
         Assert.Throws<ArgumentOutOfRangeException>("options", () => new BoundedSearch(SmallCube, new BoundedOptions { MaxNodes = 0 }));
     }
 
-    private static void CheckDistances(ulong seed, int maxMeetingStates)
+    private static void CheckDistances(int maxMeetingStates)
+    {
+        var (settled, ended) = (0, 0);
+        RandomMechanisms.ForFixedSeeds(seed => CheckDistances(seed, maxMeetingStates, ref settled, ref ended));
+        Assert.True(settled > 4000 && ended * 50 < settled, $"{settled} were settled, {ended} ended by the budget.");
+    }
+
+    private static void CheckDistances(ulong seed, int maxMeetingStates, ref int settled, ref int ended)
     {
         var mechanism = Mechanism.Create(RandomMechanisms.From(seed));
         var states = NaiveDistances.States(mechanism);
@@ -179,9 +222,11 @@ public class BoundedSearchTests
                     if (found.Outcome == BoundedOutcome.BudgetEnded)
                     {
                         Assert.InRange(found.LowerBound!.Value, 0, distance);
+                        ended++;
                         continue;
                     }
 
+                    settled++;
                     Assert.Equal((BoundedOutcome.Found, (long?)distance), (found.Outcome, found.LowerBound));
                     Assert.Equal(to, from.Apply(found.Path!.Word));
                     Assert.Equal(distance, metric.LengthOf(found.Path));

@@ -28,7 +28,7 @@ public sealed class DepthCensus
     /// <summary>True where the budget of states ended the census before the distance asked for; the distances it could not finish are left out.</summary>
     public bool IsCut { get; }
 
-    /// <summary>True where no state lies beyond the last distance counted.</summary>
+    /// <summary>True where the census met no state that it did not count, so that all states are counted; false where some lie beyond, or where it did not look beyond the greatest distance.</summary>
     public bool IsWhole { get; }
 
     /// <summary>Counts states by their distance from one.</summary>
