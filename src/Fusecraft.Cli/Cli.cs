@@ -62,6 +62,9 @@ internal static class Cli
         root.Add(RouteCommand.Create(terminal));
         root.Add(SolveCommand.Create(terminal));
         root.Add(TraceCommand.Create(terminal));
+        root.Add(DepthsCommand.Create(terminal));
+        root.Add(ScrambleCommand.Create(terminal));
+        root.Add(LoopsCommand.Create(terminal));
         Help.Install(root);
         var version = root.Options.OfType<VersionOption>().Single();
         version.Description = "Shows the version.";

@@ -71,6 +71,9 @@ internal static class MechanismInput
     public static Word Word(Mechanism mechanism, string option, string text) =>
         mechanism.TryParseWord(text, out var word, out var problem) ? word : throw new InputException($"{option}: \"{text}\" is no word of {mechanism.Name}: {problem}");
 
+    public static ColouredState Colours(Mechanism mechanism, string option, string text) =>
+        mechanism.TryParseColours(text, out var colours, out var problem) ? colours : throw new InputException($"{option}: \"{text}\" does not colour {mechanism.Name}: {problem}");
+
     private static string Problems(string path, MechanismFormatException exception) =>
         string.Join('\n', exception.Problems.Select(problem => $"{path}: {problem}"));
 }

@@ -14,7 +14,7 @@ public sealed partial class CommandLineTests : IDisposable
     [InlineData("Required command was not provided.")]
     [InlineData("There is no command 'frobnicate'.\n\n", "frobnicate", "--json")]
     [InlineData("Required argument 'FILE' missing for command: 'examine'.", "examine")]
-    [InlineData("Option '--from' is required.", "solve", "a.fuse.json")]
+    [InlineData("Give either --from or --colours.", "solve", "a.fuse.json")]
     [InlineData("Option '--to' is required.", "route", "a.fuse.json", "--from", "home")]
     [InlineData("Option '--word' is required.", "trace", "a.fuse.json")]
     [InlineData("Option '--output' is required.", "new", "cube")]
@@ -55,7 +55,7 @@ public sealed partial class CommandLineTests : IDisposable
     {
         var outcome = await _bench.RunAsync("--help");
 
-        Assert.Equal(["new", "schema", "check", "examine", "compare", "route", "solve", "trace"], ListedCommand().Matches(outcome.Output).Select(match => match.Groups[1].Value));
+        Assert.Equal(["new", "schema", "check", "examine", "compare", "route", "solve", "trace", "depths", "scramble", "loops"], ListedCommand().Matches(outcome.Output).Select(match => match.Groups[1].Value));
         Assert.Equal(ExitCodes.Done, outcome.Code);
     }
 

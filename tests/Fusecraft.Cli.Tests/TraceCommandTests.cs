@@ -28,6 +28,19 @@ public sealed class TraceCommandTests : IDisposable
         Assert.Equal(ExitCodes.Done, outcome.Code);
     }
 
+    [Theory]
+    [InlineData("x U' x' U2", "F' U2")]
+    [InlineData("M L", "L' R L")]
+    public async Task Other_names_of_cube_turns_are_traced_as_the_steps_they_mean(string word, string steps)
+    {
+        var cube = _bench.Write("cube.fuse.json", """{ "format": "fusecraft/mechanism/1", "name": "Cube", "family": { "kind": "cube", "size": 3 } }""");
+        var outcome = await _bench.RunAsync("trace", cube, "--word", word);
+        var plain = await _bench.RunAsync("trace", cube, "--word", steps);
+
+        Assert.Equal(ExitCodes.Done, outcome.Code);
+        Assert.Equal(plain.Output.Split('\n')[^2], outcome.Output.Split('\n')[^2]);
+    }
+
     [Fact]
     public async Task A_barred_step_ends_the_trace()
     {

@@ -6,18 +6,18 @@ namespace Fusecraft.Mechanisms;
 // How states and words of a mechanism are read.
 public sealed partial class Mechanism
 {
-    /// <summary>Reads a word: step names separated by spaces, with exponents, repeats, commutators and conjugates. See the conventions page of the docs.</summary>
+    /// <summary>Reads a word: step names separated by spaces, with exponents, repeats, commutators and conjugates; for cubes also the trade's other names (<c>2U M x</c>), translated to steps. See the conventions page of the docs.</summary>
     /// <exception cref="FormatException">The text is no word of this mechanism; the message says where and what would be right.</exception>
     public Word ParseWord(string text) => TryParseWord(text, out var word, out var problem) ? word : throw new FormatException(problem);
 
     /// <summary>Reads a word, or says what is wrong with it.</summary>
     /// <param name="text">Such as <c>U R' F2 (U D')3 [R, U]</c>.</param>
-    /// <param name="word">The word with all brackets written out.</param>
+    /// <param name="word">The word with all brackets written out; of steps of this mechanism only.</param>
     /// <param name="problem">Where (1-based character), what was found and what would be right; null where there is no problem.</param>
     public bool TryParseWord(string text, [NotNullWhen(true)] out Word? word, [NotNullWhen(false)] out string? problem)
     {
         ArgumentNullException.ThrowIfNull(text);
-        return new WordParser(StepNames, text).TryParse(out word, out problem);
+        return new WordParser(StepNames, _cubeNames.Value, text).TryParse(out word, out problem);
     }
 
     /// <summary>The state in which the labels have been moved by the given permutation.</summary>
@@ -51,7 +51,8 @@ public sealed partial class Mechanism
             return StateOf(labels);
         }
 
-        if (!TryParseWord(text, out var word, out var problem))
+        var parser = new WordParser(StepNames, _cubeNames.Value, text);
+        if (!parser.TryParse(out var word, out var problem))
         {
             throw new FormatException(cycleProblem is null
                 ? $"\"{text}\" is neither \"home\", nor cycles of sites, nor a word: {problem}"
@@ -60,6 +61,6 @@ public sealed partial class Mechanism
 
         return HomeState.TryApply(word, out var state, out var barred)
             ? state
-            : throw new FormatException($"the word \"{text}\" cannot be done from home: {barred}");
+            : throw new FormatException($"the word \"{text}\"{(parser.IsTranslated ? $", read as \"{word.ToFoldedString()}\"," : "")} cannot be done from home: {barred}");
     }
 }

@@ -12,9 +12,11 @@ namespace Fusecraft.Mechanisms;
 public sealed partial class Mechanism
 {
     private readonly NameTable _names;
+    private readonly ImmutableArray<string> _faceNames;
     private readonly Lazy<ShapeBoard> _board;
     private readonly Lazy<PermutationGroup> _unguardedGroup;
     private readonly Lazy<StepNames> _stepNames;
+    private readonly Lazy<CubeNames?> _cubeNames;
     private readonly Lazy<SiteMover> _siteMover;
     private readonly Lazy<SiteRows> _siteRows;
 
@@ -35,6 +37,7 @@ public sealed partial class Mechanism
         Adjacency = blueprint.Adjacency;
         _builtSymmetries = new Lazy<ImmutableArray<Permutation>>(() => blueprint.Symmetries?.Invoke() ?? []);
         ColourOfSite = colours;
+        _faceNames = definition.Colours.Kind == ColourSchemeKind.Faces ? blueprint.FaceNames : [];
         HomeBlocks = [.. blocks.Select(block => block.ToImmutableArray())];
         MarkNames = [.. marks.Select(mark => mark.Mark).Distinct()];
         HomeMarks = [.. marks];
@@ -59,6 +62,7 @@ public sealed partial class Mechanism
         _siteMover = new Lazy<SiteMover>(() => SiteMover.Of(this));
         _siteRows = new Lazy<SiteRows>(() => Mechanisms.SiteRows.Of(this));
         _stepNames = new Lazy<StepNames>(() => new StepNames(Steps));
+        _cubeNames = new Lazy<CubeNames?>(() => Definition.Family is CubeFamily cube ? new CubeNames(cube.Size, Turns) : null);
         _unguardedGroup = new Lazy<PermutationGroup>(() => PermutationGroup.Generate(Turns.Select(turn => turn.Permutation), SiteCount));
     }
 

@@ -43,6 +43,13 @@ public sealed partial class Solver
             return far;
         }
 
+        // A word made of known ones is at hand at once; where it is short enough, nothing more was asked for.
+        if (Options.MaxLength is not null && proof.Context is not null && Long(from, to, proof.Context, search.LowerBound, "", cancellation) is { HasPath: true } made
+            && Options.Metric.LengthOf(made.Path) <= Options.MaxLength)
+        {
+            return made;
+        }
+
         var unsettled = "";
         if (Options.MaxLength is not null || !countsSteps)
         {
@@ -54,7 +61,10 @@ public sealed partial class Solver
                     : TooShort();
             }
 
-            unsettled = $"The budget ended a bounded search after {bounded.NodeCount} nodes; no path is shorter than {bounded.LowerBound}, counted by {Options.Metric}.";
+            var ended = Options.TimeLimit is null || bounded.NodeCount == Options.MaxNodes
+                ? $"The budget of {Options.MaxNodes} nodes ended a bounded search"
+                : $"The time limit ended a bounded search, as a budget of {bounded.NodeCount} nodes does on any machine";
+            unsettled = $"{ended}; no path is shorter than {bounded.LowerBound}, counted by {Options.Metric}.";
             if (Options.MaxLength is not null)
             {
                 return SolveResult.Unsettled(unsettled);

@@ -122,7 +122,7 @@ public sealed partial class Solver
         };
     }
 
-    private SolveResult TooShort() => SolveResult.Impossible($"A search over all paths of at most {Options.MaxLength} {(Options.Metric.Kind == MetricKind.Step ? "steps" : $"by {Options.Metric}")} found none.");
+    private SolveResult TooShort() => SolveResult.Impossible($"A search over all paths of at most {Options.MaxLength} {(Options.Metric.Kind == MetricKind.Step ? "steps" : Options.Metric.Kind == MetricKind.Run ? "runs" : "by weights")} found none.");
 
     private static bool IsOffBoard(State state, string what, [NotNullWhen(true)] out string? reason)
     {

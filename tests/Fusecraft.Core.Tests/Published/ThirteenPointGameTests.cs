@@ -1,6 +1,5 @@
 using Fusecraft.Groupoids;
 using Fusecraft.Groups;
-using Fusecraft.Mechanisms;
 using Fusecraft.Tests.Support;
 
 namespace Fusecraft.Tests.Published;
@@ -15,7 +14,7 @@ public class ThirteenPointGameTests
     [Fact]
     public void Closed_sequences_make_the_Mathieu_group_M12_wherever_the_gap_is()
     {
-        var groupoid = ShapeGroupoid.Explore(Game());
+        var groupoid = ShapeGroupoid.Explore(ThirteenPointGame.Create());
         Assert.Equal(13, groupoid.ShapeCount);
         var home = groupoid.VertexGroupAt(0);
         for (var shape = 0; shape < 13; shape++)
@@ -34,36 +33,9 @@ public class ThirteenPointGameTests
 
     // The same 2006 paper: M13 has 13 x 95040 elements.
     [Fact]
-    public void There_are_13_times_as_many_positions() => Assert.Equal(1235520, ShapeGroupoid.Explore(Game()).VertexGroupAt(0).StateCount);
+    public void There_are_13_times_as_many_positions() => Assert.Equal(1235520, ShapeGroupoid.Explore(ThirteenPointGame.Create()).VertexGroupAt(0).StateCount);
 
     // Own figure: without the gap's rule the moves, each a product of two transpositions, generate the alternating group.
     [Fact]
-    public void Without_the_gap_the_moves_make_the_alternating_group() => Assert.Equal(3113510400, Game().UnguardedGroup.Order);
-
-    // The mechanism file of the game, its 78 turns written by the rule.
-    private static Mechanism Game()
-    {
-        var turns = new List<string>();
-        for (var i = 0; i < 13; i++)
-        {
-            int[] line = [i, (i + 1) % 13, (i + 3) % 13, (i + 9) % 13];
-            for (var a = 0; a < 4; a++)
-            {
-                for (var b = a + 1; b < 4; b++)
-                {
-                    int[] others = [.. line.Where((_, k) => k != a && k != b)];
-                    turns.Add($$"""    "{{line[a]}}:{{line[b]}}": { "moves": "({{line[a]}} {{line[b]}})({{others[0]}} {{others[1]}})", "needs": ["gap@{{line[a]}}"] }""");
-                }
-            }
-        }
-
-        Assert.Equal(78, turns.Count);
-        return MechanismFile.Parse($$"""
-            { "format": "fusecraft/mechanism/1", "name": "Thirteen points",
-              "sites": [0, 1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12],
-              "turns": {
-            {{string.Join(",\n", turns)}} },
-              "marks": { "gap": [0] } }
-            """);
-    }
+    public void Without_the_gap_the_moves_make_the_alternating_group() => Assert.Equal(3113510400, ThirteenPointGame.Create().UnguardedGroup.Order);
 }

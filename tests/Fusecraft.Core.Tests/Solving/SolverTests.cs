@@ -200,6 +200,19 @@ public class SolverTests
         return state;
     }
 
+    // As far as steps are free.
+    internal static State RandomStateIfFree(Mechanism mechanism, int length, ulong seed)
+    {
+        var random = new SeededRandom(seed);
+        var state = mechanism.HomeState;
+        for (var i = 0; i < length && state.Shape!.FreeSteps() is { Length: > 0 } steps; i++)
+        {
+            state = state.After(steps[random.NextInt32(steps.Length)]);
+        }
+
+        return state;
+    }
+
     // The least number of steps to every state, by plain breadth-first search.
     internal static Dictionary<State, int> Depths(State start)
     {

@@ -28,6 +28,18 @@ internal static partial class HugePages
         return array;
     }
 
+    /// <summary>An array of zeros that stays where it is, whatever its length.</summary>
+    public static T[] AllocatePinned<T>(int length)
+        where T : unmanaged
+    {
+        if ((long)length * Unsafe.SizeOf<T>() >= 2 * PageBytes)
+        {
+            return AllocateZeroed<T>(length);
+        }
+
+        return GC.AllocateArray<T>(length, pinned: true);
+    }
+
     /// <summary>An array of zeros.</summary>
     public static T[] AllocateZeroed<T>(int length)
         where T : unmanaged

@@ -24,6 +24,9 @@ internal sealed class Blueprint
     /// <summary>The colour of each site's label at home by face; null where there are no faces.</summary>
     public ImmutableArray<int>? Faces { get; init; }
 
+    /// <summary>What the colours of <see cref="Faces"/> are called.</summary>
+    public ImmutableArray<string> FaceNames { get; init; } = [];
+
     /// <summary>Lists the symmetries of the solid or the board as permutations of the sites, the identity first; null where the mechanism comes without. Not all need take turns to turns.</summary>
     public Func<ImmutableArray<Permutation>>? Symmetries { get; init; }
 

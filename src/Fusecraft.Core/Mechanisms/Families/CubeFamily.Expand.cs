@@ -33,6 +33,14 @@ public sealed partial class CubeFamily
         return new Layout(Size, CentreTwist).ToBlueprint();
     }
 
+    /// <summary>The name of the turn of the first layers seen from a face.</summary>
+    internal static string TurnName(char face, int layers) => layers switch
+    {
+        1 => $"{face}",
+        2 => $"{face}w",
+        _ => $"{layers}{face}w",
+    };
+
     /// <summary>The numbering of one cube: which sites and pieces there are and where a turn takes them.</summary>
     private sealed partial class Layout
     {
@@ -102,6 +110,7 @@ public sealed partial class CubeFamily
                 Adjacency = Adjacency(),
                 Symmetries = Symmetries,
                 Faces = [.. _sites.Select(site => site.Face)],
+                FaceNames = [.. FaceOrder.Select(face => $"{face}")],
                 Turns = [.. Turns()],
             };
         }
@@ -206,12 +215,7 @@ public sealed partial class CubeFamily
             {
                 for (var layers = 1; layers <= (_size % 2 == 1 ? _size / 2 : _size - 1); layers++)
                 {
-                    yield return Turn(FaceOrder.IndexOf(face, StringComparison.Ordinal), layers, layers switch
-                    {
-                        1 => $"{face}",
-                        2 => $"{face}w",
-                        _ => $"{layers}{face}w",
-                    });
+                    yield return Turn(FaceOrder.IndexOf(face, StringComparison.Ordinal), layers, TurnName(face, layers));
                 }
             }
         }

@@ -7,22 +7,28 @@ namespace Fusecraft.Mechanisms;
 
 /// <summary>
 /// Reads words: <c>U R' F2 U2' R^-3 (U R)3 [A, B] [A: B]</c>. A name is the longest one known at its place; after a name that ends in a digit an exponent needs <c>^</c>.
+/// A cube's other names are read like steps; once all brackets are written out the whole word is translated to steps, since what a name means depends on how the puzzle is held by then.
 /// </summary>
 internal sealed class WordParser
 {
     private const int MaxLength = 1_000_000;
     private const int MaxDepth = 64;
     private readonly StepNames _names;
+    private readonly CubeNames? _cubeNames;
     private readonly string _text;
     private int _at;
     private int _depth;
     private string? _problem;
 
-    public WordParser(StepNames names, string text)
+    public WordParser(StepNames names, CubeNames? cubeNames, string text)
     {
         _names = names;
+        _cubeNames = cubeNames;
         _text = text;
     }
+
+    /// <summary>True when the word read has names that are not steps of the mechanism, and was translated to steps.</summary>
+    public bool IsTranslated { get; private set; }
 
     public bool TryParse([NotNullWhen(true)] out Word? word, [NotNullWhen(false)] out string? problem)
     {
@@ -32,15 +38,22 @@ internal sealed class WordParser
             Fail($"found '{_text[_at]}', which closes nothing");
         }
 
+        List<string>? translated = null;
+        if (_problem is null && IsTranslated && !_cubeNames!.TryTranslate(steps!, out translated, out var missing))
+        {
+            _at = missing.At;
+            Fail(missing.Text);
+        }
+
         problem = _problem;
-        word = _problem is null ? new Word([.. steps!]) : null;
+        word = _problem is null ? new Word(translated is not null ? [.. translated] : [.. steps!.Select(step => step.Name)]) : null;
         return word is not null;
     }
 
     // Steps up to a closing character or the end; null after a problem.
-    private List<string>? Sequence()
+    private List<(string Name, int At)>? Sequence()
     {
-        var steps = new List<string>();
+        var steps = new List<(string Name, int At)>();
         while (true)
         {
             while (_at < _text.Length && char.IsWhiteSpace(_text[_at]))
@@ -67,10 +80,10 @@ internal sealed class WordParser
         }
     }
 
-    private List<string>? Item()
+    private List<(string Name, int At)>? Item()
     {
         var start = _at;
-        List<string>? unit;
+        List<(string Name, int At)>? unit;
         var endsInDigit = false;
         if (_text[_at] is '(' or '[')
         {
@@ -85,20 +98,31 @@ internal sealed class WordParser
         else
         {
             var name = _names.LongestPrefix(_text.AsSpan(_at));
+            if (_cubeNames is not null && CubeNames.LongestPrefix(_text.AsSpan(_at)) is var other && other.Length > name.Length)
+            {
+                if (_cubeNames.WhyUnknown(other) is { } reason)
+                {
+                    return Fail($"found \"{other}\"; {reason}");
+                }
+
+                IsTranslated = true;
+                name = other;
+            }
+
             if (name.IsEmpty)
             {
                 return Fail($"found \"{Unknown()}\"; the steps are {Listing()}");
             }
 
+            unit = [(name.ToString(), _at)];
             _at += name.Length;
             endsInDigit = char.IsAsciiDigit(name[^1]);
-            unit = [name.ToString()];
         }
 
         return unit is null ? null : Repeat(unit, start, endsInDigit);
     }
 
-    private List<string>? Group()
+    private List<(string Name, int At)>? Group()
     {
         _at++;
         var inner = Sequence();
@@ -106,7 +130,7 @@ internal sealed class WordParser
     }
 
     // The commutator [A, B] is A B A' B', the conjugate [A: B] is A B A'.
-    private List<string>? Bracket()
+    private List<(string Name, int At)>? Bracket()
     {
         _at++;
         if (Sequence() is not { } first)
@@ -125,7 +149,7 @@ internal sealed class WordParser
             return null;
         }
 
-        List<string> steps = [.. first, .. second, .. Inverse(first)];
+        List<(string Name, int At)> steps = [.. first, .. second, .. Inverse(first)];
         if (isCommutator)
         {
             steps.AddRange(Inverse(second));
@@ -134,7 +158,7 @@ internal sealed class WordParser
         return steps;
     }
 
-    private List<string>? Repeat(List<string> unit, int start, bool endsInDigit)
+    private List<(string Name, int At)>? Repeat(List<(string Name, int At)> unit, int start, bool endsInDigit)
     {
         var exponent = BigInteger.One;
         var digits = _at;
@@ -187,7 +211,7 @@ internal sealed class WordParser
         }
 
         var once = exponent.Sign < 0 ? Inverse(unit) : unit;
-        var steps = new List<string>();
+        var steps = new List<(string Name, int At)>();
         for (var i = (int)BigInteger.Abs(exponent); i > 0; i--)
         {
             steps.AddRange(once);
@@ -196,16 +220,19 @@ internal sealed class WordParser
         return steps;
     }
 
-    private List<string> Inverse(List<string> steps)
+    private List<(string Name, int At)> Inverse(List<(string Name, int At)> steps)
     {
-        var inverse = new List<string>(steps.Count);
+        var inverse = new List<(string Name, int At)>(steps.Count);
         for (var i = steps.Count - 1; i >= 0; i--)
         {
-            inverse.Add(_names.Opposite(steps[i]));
+            inverse.Add((Opposite(steps[i].Name), steps[i].At));
         }
 
         return inverse;
     }
+
+    // On cubes every name goes both ways, those that are no steps too.
+    private string Opposite(string name) => _cubeNames is null ? _names.Opposite(name) : name.EndsWith('\'') ? name[..^1] : name + "'";
 
     private bool Expect(char closing)
     {
@@ -236,7 +263,7 @@ internal sealed class WordParser
         return names.Count <= 24 ? string.Join(", ", names) : string.Join(", ", names.Take(20)) + ", …";
     }
 
-    private List<string>? Fail(string problem)
+    private List<(string Name, int At)>? Fail(string problem)
     {
         _problem ??= $"character {_at + 1}: {problem}";
         return null;
