@@ -31,7 +31,8 @@ internal static class SolveOutput
         if (result.HasPath)
         {
             output.WriteLine(result.Path.Length == 0 ? "(no steps)" : result.Path.Word.ToString());
-            output.WriteLine($"{Wording.Count(result.Path.Length, "step")}{(result.IsProvenShortest ? ", proven shortest" : ", perhaps not the shortest")}. {result.Reason}");
+            var runs = result.Metric.Kind == MetricKind.Run ? $"{Wording.Count((int)result.Metric.LengthOf(result.Path), "run")}, " : "";
+            output.WriteLine($"{runs}{Wording.Count(result.Path.Length, "step")}{(result.IsProvenShortest ? ", proven shortest" : ", perhaps not the shortest")}. {result.Reason}");
         }
         else
         {

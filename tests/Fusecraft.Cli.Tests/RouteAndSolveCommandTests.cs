@@ -149,13 +149,30 @@ public sealed class RouteAndSolveCommandTests : IDisposable
         Assert.Equal(ExitCodes.BadInput, outcome.Code);
     }
 
-    // Twenty steps are known to suffice for any state (half turns counting one), so a word of at most thirty exists; finding one is beyond the solver's budget of states.
+    [Fact]
+    public async Task Runs_are_counted_where_asked_for()
+    {
+        var cube = _bench.Write("cube.fuse.json", Files.PlainCube);
+
+        var found = await _bench.RunAsync("route", cube, "--from", "U2 R2 F2", "--to", "goal", "--max-length", "3", "--metric", "run");
+        Assert.Equal("F F R R U U\n3 runs, 6 steps, proven shortest. A search over all shorter paths found none.\n", found.Output);
+        Assert.Equal(ExitCodes.Done, found.Code);
+
+        var none = await _bench.RunAsync("route", cube, "--from", "U2 R2 F2", "--to", "goal", "--max-length", "2", "--metric", "run");
+        Assert.Equal("There is no such way. A search over all paths of at most 2 runs found none.\n", none.Output);
+        Assert.Equal(ExitCodes.Negative, none.Code);
+
+        var json = await _bench.RunAsync("route", cube, "--from", "U2 R2 F2", "--to", "goal", "--max-length", "3", "--metric", "run", "--json");
+        Assert.Contains("\"length\":6,\"metric\":\"run\",\"lengthByMetric\":3,\"provenShortest\":true", json.Output, StringComparison.Ordinal);
+    }
+
+    // Twenty runs are known to suffice for any state; finding them is beyond a budget of so few nodes.
     [Fact]
     public async Task A_budget_that_ends_a_search_leaves_the_question_open()
     {
         var cube = _bench.Write("cube.fuse.json", Files.PlainCube);
 
-        var outcome = await _bench.RunAsync("solve", cube, "--from", "U R F D L B U2 R2 D F' L B D' R2", "--max-length", "40", "--json");
+        var outcome = await _bench.RunAsync("route", cube, "--from", "U R F D L B U2 R2 D F' L B D' R2", "--to", "goal", "--max-length", "20", "--metric", "run", "--nodes", "1000", "--json");
 
         Assert.StartsWith("""{"solvable":""", outcome.Output, StringComparison.Ordinal);
         Assert.Contains("\"word\":null,\"length\":null,\"provenShortest\":false,\"reason\":\"The budget of ", outcome.Output, StringComparison.Ordinal);

@@ -7,7 +7,7 @@ public static class SolveReport
 {
     /// <summary>
     /// One JSON object on one line: <c>solvable</c> (true, false, or null where a budget ended the work), <c>word</c> and <c>length</c> (null where there is no path),
-    /// <c>provenShortest</c> and <c>reason</c>.
+    /// where length is not counted by steps <c>metric</c> and <c>lengthByMetric</c>, then <c>provenShortest</c> and <c>reason</c>.
     /// </summary>
     /// <param name="result">What a solver found.</param>
     public static string ToJson(SolveResult result)
@@ -33,6 +33,12 @@ public static class SolveReport
             else
             {
                 json.WriteNull("length");
+            }
+
+            if (result.HasPath && result.Metric.Kind != MetricKind.Step)
+            {
+                json.WriteString("metric", result.Metric.ToString());
+                json.WriteNumber("lengthByMetric", result.Metric.LengthOf(result.Path));
             }
 
             json.WriteBoolean("provenShortest", result.IsProvenShortest);

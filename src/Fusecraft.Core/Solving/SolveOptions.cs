@@ -6,8 +6,17 @@ public sealed class SolveOptions
     /// <summary>The defaults.</summary>
     public static SolveOptions Default { get; } = new();
 
-    /// <summary>Only paths of at most this many steps count; null for any length.</summary>
+    /// <summary>Only paths of at most this length, by the metric, count; null for any length.</summary>
     public int? MaxLength { get; init; }
+
+    /// <summary>How the length of paths is counted. It matters for paths between states; paths between shapes and to goals that leave labels free are counted by steps.</summary>
+    public Metric Metric { get; init; } = Metric.Step;
+
+    /// <summary>Where a greatest length is asked for, or another metric than steps, a bounded search goes on when that from both ends has run out of states; it ends when it has tried this many nodes.</summary>
+    public long MaxNodes { get; init; } = 200_000_000;
+
+    /// <summary>The bounded search ends after this time; null for none. See <see cref="BoundedOptions.TimeLimit"/>.</summary>
+    public TimeSpan? TimeLimit { get; init; }
 
     /// <summary>A search ends when it holds this many states. Takes about 100 bytes a state on a cube of 54 sites.</summary>
     public int MaxStates { get; init; } = 1_000_000;

@@ -21,7 +21,10 @@ public sealed class SolveResult
     /// <summary>A path as asked for, replayed before it was given; null where there is none, or where a budget ended before one was found.</summary>
     public TurnPath? Path { get; }
 
-    /// <summary>True when it is proven that no path has fewer steps.</summary>
+    /// <summary>How the length of the path was counted.</summary>
+    public Metric Metric { get; private init; } = Metric.Step;
+
+    /// <summary>True when it is proven that no path is shorter, by the metric.</summary>
     public bool IsProvenShortest { get; }
 
     /// <summary>In one sentence, how the answer was settled or what ended the work.</summary>
@@ -32,6 +35,9 @@ public sealed class SolveResult
     public bool HasPath => Path is not null;
 
     internal static SolveResult Shortest(TurnPath path) => new(true, path, true, path.Length == 0 ? "Nothing needs to be done." : "A search over all shorter paths found none.");
+
+    internal static SolveResult Shortest(TurnPath path, Metric metric) =>
+        new(true, path, true, path.Length == 0 ? "Nothing needs to be done." : "A search over all shorter paths found none.") { Metric = metric };
 
     internal static SolveResult Found(TurnPath path, string reason) => new(true, path, false, reason);
 

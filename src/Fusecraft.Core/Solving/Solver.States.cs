@@ -24,7 +24,8 @@ public sealed partial class Solver
         search.AddStart(from.Shape!, LabelsOn(from));
         search.AddGoal(to.Shape!, LabelsOn(to));
         progress?.Report(new SolveProgress("searching nearby", 0));
-        if (Search(Math.Min(FirstLook, Options.MaxStates)) is { } near)
+        var countsSteps = Options.Metric.Kind == MetricKind.Step;
+        if (countsSteps && Search(Math.Min(FirstLook, Options.MaxStates)) is { } near)
         {
             return near;
         }
@@ -37,9 +38,37 @@ public sealed partial class Solver
         }
 
         progress?.Report(new SolveProgress("searching", search.StateCount));
-        if (Search(Options.MaxStates) is { } far)
+        if (countsSteps && Search(Options.MaxStates) is { } far)
         {
             return far;
+        }
+
+        // A word made of known ones is at hand at once; where it is short enough, nothing more was asked for.
+        if (Options.MaxLength is not null && proof.Context is not null && Long(from, to, proof.Context, search.LowerBound, "", cancellation) is { HasPath: true } made
+            && Options.Metric.LengthOf(made.Path) <= Options.MaxLength)
+        {
+            return made;
+        }
+
+        var unsettled = "";
+        if (Options.MaxLength is not null || !countsSteps)
+        {
+            var bounded = _bounded.Value.Find(from, to, Options.MaxLength ?? int.MaxValue, progress, cancellation);
+            if (bounded.Outcome != BoundedOutcome.BudgetEnded)
+            {
+                return bounded.HasPath ? SolveResult.Shortest(bounded.Path, Options.Metric)
+                    : bounded.Outcome == BoundedOutcome.NoneAtAll ? SolveResult.Impossible("A search has tried every word that could lead there.")
+                    : TooShort();
+            }
+
+            var ended = Options.TimeLimit is null || bounded.NodeCount == Options.MaxNodes
+                ? $"The budget of {Options.MaxNodes} nodes ended a bounded search"
+                : $"The time limit ended a bounded search, as a budget of {bounded.NodeCount} nodes does on any machine";
+            unsettled = $"{ended}; no path is shorter than {bounded.LowerBound}, counted by {Options.Metric}.";
+            if (Options.MaxLength is not null)
+            {
+                return SolveResult.Unsettled(unsettled);
+            }
         }
 
         if (proof.Context is null)
@@ -48,7 +77,7 @@ public sealed partial class Solver
         }
 
         progress?.Report(new SolveProgress("making words", 0));
-        return Long(from, to, proof.Context, search.LowerBound, cancellation);
+        return Long(from, to, proof.Context, search.LowerBound, unsettled, cancellation);
 
         SolveResult? Search(int maxStates) => search.Run(maxStates, Options.MaxLength) switch
         {
@@ -128,21 +157,20 @@ public sealed partial class Solver
         return (there, there.Permutation.Inverse() * wanted * outward.Permutation.Inverse(), outward);
     }
 
-    private SolveResult Long(State from, State to, RegionContext context, int lowerBound, CancellationToken cancellation)
+    private static SolveResult Long(State from, State to, RegionContext context, int lowerBound, string unsettled, CancellationToken cancellation)
     {
         var (there, loop, outward) = LoopFor(
             context, from.Labels.Inverse() * to.Labels, context.Groupoid.IndexOf(from.Shape!), context.Groupoid.IndexOf(to.Shape!));
         if (context.Undo(loop.Inverse(), cancellation) is not { } word)
         {
-            return SolveResult.Unsettled("The vertex group proves that a path exists, but no word of reasonable length was found for it.", Options.MaxLength is null ? true : null);
+            return SolveResult.Unsettled("The vertex group proves that a path exists, but no word of reasonable length was found for it.", true);
         }
 
         var steps = PathShortening.Shorten([.. there.Steps, .. word, .. outward.Steps]);
-        return steps.Count > Options.MaxLength
-            ? SolveResult.Unsettled($"The budget of {Options.MaxStates} states ended the search; there is a path of {steps.Count} steps and none of fewer than {lowerBound}.")
-            : SolveResult.Found(
-                Replayed(from, steps, end => end == to),
-                $"Made from the shape tree and a stabilizer chain with words; a search proved that no path has fewer than {lowerBound} steps before its budget ended.");
+        return SolveResult.Found(
+            Replayed(from, steps, end => end == to),
+            "Made from the shape tree and a stabilizer chain with words. " +
+            (unsettled.Length > 0 ? unsettled : $"A search proved that no path has fewer than {lowerBound} steps before its budget ended."));
     }
 
     private string Explain(MembershipEvidence evidence, RegionContext context)

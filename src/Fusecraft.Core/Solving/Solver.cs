@@ -20,12 +20,14 @@ public sealed partial class Solver
 
     private readonly Lock _lock = new();
     private readonly Dictionary<int, RegionContext> _contexts = [];
+    private readonly Lazy<BoundedSearch> _bounded;
     private ShapeGroupoid? _fromHome;
 
     /// <summary>Makes a solver.</summary>
     /// <param name="mechanism">The mechanism.</param>
     /// <param name="options">How far to go; null for the defaults.</param>
     /// <exception cref="ArgumentOutOfRangeException">A budget is below 1, or the greatest length is negative.</exception>
+    /// <exception cref="ArgumentException">The metric weighs turns that the mechanism does not have.</exception>
     public Solver(Mechanism mechanism, SolveOptions? options = null)
     {
         ArgumentNullException.ThrowIfNull(mechanism);
@@ -33,8 +35,11 @@ public sealed partial class Solver
         ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxStates, 1, nameof(options));
         ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxShapes, 1, nameof(options));
         ArgumentOutOfRangeException.ThrowIfNegative(options.MaxLength ?? 0, nameof(options));
+        ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxNodes, 1, nameof(options));
+        options.Metric.RequireTurnsOf(mechanism, nameof(options));
         Mechanism = mechanism;
         Options = options;
+        _bounded = new Lazy<BoundedSearch>(() => new BoundedSearch(mechanism, new BoundedOptions { Metric = options.Metric, MaxNodes = options.MaxNodes, TimeLimit = options.TimeLimit }));
     }
 
     /// <summary>The mechanism.</summary>
@@ -117,7 +122,7 @@ public sealed partial class Solver
         };
     }
 
-    private SolveResult TooShort() => SolveResult.Impossible($"A search over all paths of at most {Options.MaxLength} steps found none.");
+    private SolveResult TooShort() => SolveResult.Impossible($"A search over all paths of at most {Options.MaxLength} {(Options.Metric.Kind == MetricKind.Step ? "steps" : Options.Metric.Kind == MetricKind.Run ? "runs" : "by weights")} found none.");
 
     private static bool IsOffBoard(State state, string what, [NotNullWhen(true)] out string? reason)
     {

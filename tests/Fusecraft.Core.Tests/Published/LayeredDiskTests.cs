@@ -13,7 +13,7 @@ namespace Fusecraft.Tests.Published;
 /// </summary>
 public class LayeredDiskTests
 {
-    private const string Disk = """
+    internal const string Disk = """
         { "format": "fusecraft/mechanism/1", "name": "Layered disk",
           "sites": ["t1", "t2", "t3", "t4", "t5", "t6", "t7", "t8", "t9", "t10", "t11", "t12",
                     "b1", "b2", "b3", "b4", "b5", "b6", "b7", "b8", "b9", "b10", "b11", "b12", "m1", "m2"],
