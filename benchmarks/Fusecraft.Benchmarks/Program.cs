@@ -10,6 +10,9 @@ switch (args)
     case ["large-group", ..]:
         LargeGraph.RunGroup(args[1..]);
         return 0;
+    case ["short-words", ..]:
+        ShortWords.Run(args[1..]);
+        return 0;
     case ["small-graphs"]:
         SmallGraphs.Run();
         return 0;
