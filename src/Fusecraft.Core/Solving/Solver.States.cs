@@ -130,19 +130,64 @@ public sealed partial class Solver
 
     private SolveResult Long(State from, State to, RegionContext context, int lowerBound, CancellationToken cancellation)
     {
-        var (there, loop, outward) = LoopFor(
-            context, from.Labels.Inverse() * to.Labels, context.Groupoid.IndexOf(from.Shape!), context.Groupoid.IndexOf(to.Shape!));
-        if (context.Undo(loop.Inverse(), cancellation) is not { } word)
+        if (LongWord(from, to, context, Options.MaxNodes > 0, cancellation) is not { } word)
         {
             return SolveResult.Unsettled("The vertex group proves that a path exists, but no word of reasonable length was found for it.", Options.MaxLength is null ? true : null);
         }
 
-        var steps = PathShortening.Shorten([.. there.Steps, .. word, .. outward.Steps]);
-        return steps.Count > Options.MaxLength
-            ? SolveResult.Unsettled($"The budget of {Options.MaxStates} states ended the search; there is a path of {steps.Count} steps and none of fewer than {lowerBound}.")
+        return word.Steps.Count > Options.MaxLength
+            ? SolveResult.Unsettled($"The budget of {Options.MaxStates} states ended the search; there is a path of {word.Steps.Count} steps and none of fewer than {lowerBound}.")
             : SolveResult.Found(
-                Replayed(from, steps, end => end == to),
-                $"Made from the shape tree and a stabilizer chain with words; a search proved that no path has fewer than {lowerBound} steps before its budget ended.");
+                Replayed(from, word.Steps, end => end == to),
+                $"{word.How}; a search proved that no path has fewer than {lowerBound} steps before its budget ended.");
+    }
+
+    // By stages where they fit, else by the shape tree and a stabilizer chain with words; both end at the base shape, from where the tree leads on.
+    private (List<Step> Steps, string How, long Nodes)? LongWord(State from, State to, RegionContext context, bool byStages, CancellationToken cancellation)
+    {
+        var start = context.Groupoid.IndexOf(from.Shape!);
+        var (there, loop, outward) = LoopFor(context, from.Labels.Inverse() * to.Labels, start, context.Groupoid.IndexOf(to.Shape!));
+        var staged = byStages ? context.Staged(_staged, cancellation) : null;
+        if (staged?.Find(start, outward.Permutation * to.Labels.Inverse() * from.Labels, cancellation) is var (word, nodes))
+        {
+            return (staged.Shorten(start, [.. word, .. outward.Steps], cancellation), "Made by stages", nodes);
+        }
+
+        if (context.Undo(loop.Inverse(), cancellation) is not { } undoing)
+        {
+            return null;
+        }
+
+        List<Step> steps = [.. there.Steps, .. undoing, .. outward.Steps];
+        return (staged?.Shorten(start, steps, cancellation) ?? PathShortening.Shorten(steps), "Made from the shape tree and a stabilizer chain with words", 1);
+    }
+
+    /// <summary>A short word by stages, without a search for a shortest one. See <see cref="StagedSolver"/>.</summary>
+    internal StagedResult RouteByStages(State from, State to, CancellationToken cancellation)
+    {
+        RequireOwn(from);
+        RequireOwn(to);
+        lock (_lock)
+        {
+            if (IsOffBoard(from, "starts", out var reason) || IsOffBoard(to, "ends", out reason))
+            {
+                return new StagedResult(false, null, 0, 1, reason);
+            }
+
+            var proof = Prove(from, to, cancellation);
+            if (proof.Context is null)
+            {
+                return new StagedResult(proof.Impossible is null ? null : false, null, 0, 1, proof.Impossible ?? proof.Unsettled!);
+            }
+
+            if (LongWord(from, to, proof.Context, byStages: true, cancellation) is not { } word)
+            {
+                return new StagedResult(true, null, 0, 1, "The vertex group proves that a path exists, but no word of reasonable length was found for it.");
+            }
+
+            var path = Replayed(from, word.Steps, end => end == to);
+            return new StagedResult(true, path, _staged.Metric.LengthOf(path), word.Nodes, word.How + ".");
+        }
     }
 
     private string Explain(MembershipEvidence evidence, RegionContext context)

@@ -7,7 +7,7 @@ namespace Fusecraft.Solving;
 
 /// <summary>
 /// Finds turn paths between states of a mechanism, or proves that there is none. A search from both ends finds shortest paths while they are short; exploration and vertex group prove what cannot be
-/// reached; where a path exists but is too long to search for, the shape tree and a stabilizer chain with words make one.
+/// reached; where a path exists but is too long to search for, a descent by stages makes a short one (see <see cref="StagedSolver"/>), or else the shape tree and a stabilizer chain with words.
 /// </summary>
 /// <remarks>
 /// Keeps what it has found out about the mechanism, so solving many states with one solver is cheaper than one solver each. Every path is replayed before it is given. The answers depend on the
@@ -20,6 +20,7 @@ public sealed partial class Solver
 
     private readonly Lock _lock = new();
     private readonly Dictionary<int, RegionContext> _contexts = [];
+    private readonly StagedOptions _staged;
     private ShapeGroupoid? _fromHome;
 
     /// <summary>Makes a solver.</summary>
@@ -27,14 +28,21 @@ public sealed partial class Solver
     /// <param name="options">How far to go; null for the defaults.</param>
     /// <exception cref="ArgumentOutOfRangeException">A budget is below 1, or the greatest length is negative.</exception>
     public Solver(Mechanism mechanism, SolveOptions? options = null)
+        : this(mechanism, options, null)
+    {
+    }
+
+    internal Solver(Mechanism mechanism, SolveOptions? options, StagedOptions? staged)
     {
         ArgumentNullException.ThrowIfNull(mechanism);
         options ??= SolveOptions.Default;
         ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxStates, 1, nameof(options));
         ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxShapes, 1, nameof(options));
         ArgumentOutOfRangeException.ThrowIfNegative(options.MaxLength ?? 0, nameof(options));
+        ArgumentOutOfRangeException.ThrowIfNegative(options.MaxNodes, nameof(options));
         Mechanism = mechanism;
         Options = options;
+        _staged = staged ?? new StagedOptions { MaxNodes = Math.Max(1, options.MaxNodes) };
     }
 
     /// <summary>The mechanism.</summary>

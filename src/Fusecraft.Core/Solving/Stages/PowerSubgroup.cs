@@ -56,29 +56,33 @@ internal sealed class PowerSubgroup
     /// <summary>True when every loop that keeps the colours is one of the subgroup, so that the colours tell its cosets apart.</summary>
     public bool IsClosedIn(PermutationGroup all) => _isClosed ??= all.ColouringStabilizer(Colours).Order == Group.Order;
 
-    /// <summary>The whole region with all moves, then what is generated when turns are replaced by powers or left out.</summary>
+    /// <summary>The whole region with all moves; null where there are too many arcs.</summary>
+    public static PowerSubgroup? Whole(VertexGroup vertexGroup, StageMove[] moves, long maxArcs, CancellationToken cancellation)
+    {
+        var maxShapes = maxArcs / Math.Max(1, moves.Length);
+        return vertexGroup.Region.ShapeCount <= maxShapes && StageFrame.Explore(vertexGroup.Groupoid, vertexGroup.BaseShape, moves, (int)maxShapes, cancellation) is { } frame
+            ? new PowerSubgroup([.. moves.Select(_ => true)], frame, vertexGroup.Group)
+            : null;
+    }
+
+    /// <summary>What is generated when turns are replaced by powers or left out. None where steps cannot be undone.</summary>
     /// <param name="vertexGroup">The loops of the region at the base shape.</param>
-    /// <param name="moves">All moves.</param>
-    /// <param name="maxArcs">The exploration ends when it has looked at this many arcs.</param>
+    /// <param name="whole">The whole region.</param>
+    /// <param name="maxArcs">The search ends when it has looked at this many arcs.</param>
     /// <param name="cancellation">Ends the work early.</param>
-    public static List<PowerSubgroup> Find(VertexGroup vertexGroup, StageMove[] moves, long maxArcs, CancellationToken cancellation)
+    public static List<PowerSubgroup> Find(VertexGroup vertexGroup, PowerSubgroup whole, long maxArcs, CancellationToken cancellation)
     {
         var subgroups = new List<PowerSubgroup>();
-        if (StageFrame.Explore(vertexGroup.Groupoid, vertexGroup.BaseShape, moves, (int)Math.Min(int.MaxValue, maxArcs), cancellation) is not { } whole)
-        {
-            return subgroups;
-        }
-
-        subgroups.Add(new PowerSubgroup([.. moves.Select(_ => true)], whole, vertexGroup.Group));
         if (!vertexGroup.Groupoid.Mechanism.IsReversible)
         {
             return subgroups;
         }
 
+        var moves = whole.Frame.Moves;
         foreach (var takes in Choices(moves))
         {
             StageMove[] taken = [.. moves.Where((_, move) => takes[move])];
-            var frame = StageFrame.Explore(vertexGroup.Groupoid, vertexGroup.BaseShape, taken, whole.ShapeCount, cancellation)!;
+            var frame = StageFrame.Explore(vertexGroup.Groupoid, vertexGroup.BaseShape, taken, whole.Frame.ShapeCount, cancellation)!;
             maxArcs -= (long)frame.ShapeCount * taken.Length;
             if (maxArcs < 0)
             {

@@ -42,6 +42,9 @@ internal sealed class StageFrame
     /// <summary>The number here of a shape of the groupoid; -1 where the moves do not reach it. The base shape is number 0.</summary>
     public int LocalOf(int shape) => _local.GetValueOrDefault(shape, -1);
 
+    /// <summary>The shape after a step; -1 where it is barred or the moves do not reach it.</summary>
+    public int After(int shape, int step) => _groupoid.Target(_shapes[shape], step) is >= 0 and var target ? LocalOf(target) : -1;
+
     /// <summary>Finds the shapes; null where there are more than a number of them.</summary>
     public static StageFrame? Explore(ShapeGroupoid groupoid, int baseShape, StageMove[] moves, int maxShapes, CancellationToken cancellation)
     {

@@ -7,12 +7,16 @@ namespace Fusecraft.Solving;
 internal sealed class StageWords
 {
     private readonly Stage _stage;
+    private readonly Func<bool> _isOver;
     private readonly int _width;
     private readonly List<int> _word = [];
     private int[] _coordinates;
 
-    public StageWords(Stage stage)
+    /// <param name="stage">The stage.</param>
+    /// <param name="isOver">Asked now and then; true ends the search.</param>
+    public StageWords(Stage stage, Func<bool> isOver)
     {
+        _isOver = isOver;
         _stage = stage;
         _width = stage.Components.Length;
         _coordinates = new int[16 * _width];
@@ -78,7 +82,7 @@ internal sealed class StageWords
                 continue;
             }
 
-            if (++Nodes >= maxNodes)
+            if (++Nodes >= maxNodes || ((Nodes & 0xFFFF) == 0 && _isOver()))
             {
                 return false;
             }

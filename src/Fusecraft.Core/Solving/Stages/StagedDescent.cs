@@ -25,29 +25,33 @@ internal sealed class StagedDescent
     private static readonly int[] Weights = [1, 2, 4, 8];
 
     private readonly IReadOnlyList<Stage> _stages;
+    private readonly Func<bool> _isOver;
     private readonly CancellationToken _cancellation;
     private long _nodes;
     private long _maxNodes;
     private int _least;
-    private int[]? _best;
 
-    public StagedDescent(IReadOnlyList<Stage> stages, CancellationToken cancellation)
+    /// <param name="stages">The stages, the first one first.</param>
+    /// <param name="isOver">Asked now and then; true ends the descent.</param>
+    /// <param name="cancellation">Ends the work early.</param>
+    public StagedDescent(IReadOnlyList<Stage> stages, Func<bool> isOver, CancellationToken cancellation)
     {
         _stages = stages;
+        _isOver = isOver;
         _cancellation = cancellation;
     }
 
     /// <summary>The moves tried so far.</summary>
     public long Nodes => _nodes;
 
-    /// <summary>The steps of the cheapest word found; null where the budget ended before there was one.</summary>
+    /// <summary>Finds words, each cheaper than those before.</summary>
     /// <param name="shape">The number of the shape in the first stage's frame.</param>
     /// <param name="labels">Where the labels are; the word brings all of them home at the base shape.</param>
     /// <param name="maxNodes">How many moves may be tried.</param>
-    /// <param name="isBetter">Given a word's steps; true where it is better than those before, which it then replaces.</param>
-    public int[]? Run(int shape, Permutation labels, long maxNodes, Func<int[], bool> isBetter)
+    /// <param name="found">Given the steps of each word.</param>
+    public void Run(int shape, Permutation labels, long maxNodes, Action<int[]> found)
     {
-        (_nodes, _maxNodes, _least, _best) = (0, maxNodes, int.MaxValue, null);
+        (_nodes, _maxNodes, _least) = (0, maxNodes, int.MaxValue);
         var siteOf = new ushort[_stages[0].Frame.SiteCount];
         for (var label = 0; label < siteOf.Length; label++)
         {
@@ -56,7 +60,7 @@ internal sealed class StagedDescent
 
         if (Ranked(new End(null, [], siteOf, shape, 0), 0) is not { } start)
         {
-            return null;
+            return;
         }
 
         for (var width = 1; width <= MaxWidth && _nodes < _maxNodes; width *= Widening)
@@ -69,7 +73,7 @@ internal sealed class StagedDescent
 
             foreach (var weight in width == 1 ? FirstWeights : Plain)
             {
-                Finish(ends, weight, isBetter);
+                Finish(ends, weight, found);
             }
 
             if (_stages.Count == 1)
@@ -77,8 +81,6 @@ internal sealed class StagedDescent
                 break;
             }
         }
-
-        return _best;
     }
 
     // The most promising ends of a stage.
@@ -100,7 +102,7 @@ internal sealed class StagedDescent
         var wanted = width * Choice;
         var found = new List<End>();
         var seen = new Dictionary<Permutation, int>();
-        var words = new StageWords(_stages[stage]) { Weight = weight };
+        var words = new StageWords(_stages[stage], IsOver) { Weight = weight };
         var share = _nodes + ((_maxNodes - _nodes) / 2);
         var next = starts.ConvertAll(start => start.Left * weight);
         var done = starts.ConvertAll(_ => -1);
@@ -119,7 +121,6 @@ internal sealed class StagedDescent
                     continue;
                 }
 
-                _cancellation.ThrowIfCancellationRequested();
                 var start = starts[i];
                 var before = words.Nodes;
                 var budget = share - _nodes;
@@ -129,7 +130,7 @@ internal sealed class StagedDescent
                     return found.Count >= 2 * wanted;
                 });
                 _nodes += words.Nodes - before;
-                if (words.Nodes - before >= budget)
+                if (words.Nodes - before >= budget || _maxNodes == 0)
                 {
                     return Best(found, width);
                 }
@@ -155,13 +156,13 @@ internal sealed class StagedDescent
     private static List<End> Best(List<End> ends, int width) => [.. ends.OrderBy(end => end.Cost + end.Left).Take(width)];
 
     // The cheapest words of the last stage.
-    private void Finish(List<End> starts, int weight, Func<int[], bool> isBetter)
+    private void Finish(List<End> starts, int weight, Action<int[]> found)
     {
         var stage = _stages.Count - 1;
-        var words = new StageWords(_stages[stage]) { Weight = weight };
+        var words = new StageWords(_stages[stage], IsOver) { Weight = weight };
         var next = starts.ConvertAll(start => start.Left * weight);
         var share = weight == 1 ? _maxNodes : _nodes + ((_maxNodes - _nodes) / 2);
-        while (next.Exists(cost => cost < int.MaxValue) && _nodes < share)
+        while (next.Exists(cost => cost < int.MaxValue) && _nodes < Math.Min(share, _maxNodes))
         {
             var limit = Enumerable.Range(0, starts.Count).Min(i => next[i] == int.MaxValue ? int.MaxValue : starts[i].Cost + next[i]);
             if (limit >= _least && weight == 1)
@@ -170,22 +171,20 @@ internal sealed class StagedDescent
             }
 
             var before = _least;
-            for (var i = 0; i < starts.Count && _nodes < share && (weight > 1 ? _least == before : limit < _least); i++)
+            for (var i = 0; i < starts.Count && _nodes < Math.Min(share, _maxNodes) && (weight > 1 ? _least == before : limit < _least); i++)
             {
                 if (next[i] > limit - starts[i].Cost)
                 {
                     continue;
                 }
 
-                _cancellation.ThrowIfCancellationRequested();
                 var start = starts[i];
                 var nodes = words.Nodes;
                 words.Bound = _least == int.MaxValue ? int.MaxValue : _least - start.Cost;
                 words.Visit(start.Shape, start.Coordinates, -1, limit - start.Cost, nodes + share - _nodes, (moves, cost) =>
                 {
                     _least = start.Cost + cost;
-                    int[] steps = [.. Steps(start, stage), .. moves.SelectMany(move => _stages[stage].Frame.Moves[move].Steps)];
-                    _best = isBetter(steps) ? steps : _best;
+                    found([.. Steps(start, stage), .. moves.SelectMany(move => _stages[stage].Frame.Moves[move].Steps)]);
                     return true;
                 });
                 _nodes += words.Nodes - nodes;
@@ -197,6 +196,17 @@ internal sealed class StagedDescent
                 return;
             }
         }
+    }
+
+    private bool IsOver()
+    {
+        _cancellation.ThrowIfCancellationRequested();
+        if (_isOver())
+        {
+            _maxNodes = 0;
+        }
+
+        return _maxNodes == 0;
     }
 
     private End? Ranked(End end, int stage)
