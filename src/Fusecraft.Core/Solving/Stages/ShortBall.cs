@@ -13,40 +13,23 @@ internal sealed class ShortBall
     public ShortBall(StageFrame frame, int shape, int maxCount)
     {
         _frame = frame;
-        var buckets = new SortedDictionary<int, List<(Permutation Permutation, int Shape, int Before, int Move)>>
-        {
-            [0] = [(Permutation.Identity, shape, -1, -1)],
-        };
-        while (buckets.Count > 0 && _entries.Count < maxCount)
+        Add(Permutation.Identity, shape, 0, -1, -1);
+        var buckets = new SortedDictionary<int, List<(int Before, int Move)>>();
+        Announce(0, buckets);
+        while (buckets.Count > 0)
         {
             var (cost, bucket) = buckets.First();
             buckets.Remove(cost);
-            foreach (var (permutation, at, before, by) in bucket)
+            foreach (var (before, move) in bucket)
             {
-                if (!_numbers.TryAdd(permutation, _entries.Count))
+                if (Count == maxCount)
                 {
-                    continue;
+                    return;
                 }
 
-                _entries.Add((permutation, at, cost, before, by));
-                for (var move = 0; move < frame.Moves.Length; move++)
+                if (Add(this[before] * frame.Moves[move].Permutation, frame.Targets[(Shape(before) * frame.Moves.Length) + move], cost, before, move))
                 {
-                    var target = frame.Targets[(at * frame.Moves.Length) + move];
-                    if (target >= 0 && !(by >= 0 && frame.Moves[by].Class >= 0 && frame.Moves[by].Class == frame.Moves[move].Class))
-                    {
-                        var total = cost + frame.Moves[move].Cost;
-                        if (!buckets.TryGetValue(total, out var list))
-                        {
-                            buckets.Add(total, list = []);
-                        }
-
-                        list.Add((permutation * frame.Moves[move].Permutation, target, _entries.Count - 1, move));
-                    }
-                }
-
-                if (_entries.Count >= maxCount)
-                {
-                    break;
+                    Announce(Count - 1, buckets);
                 }
             }
         }
@@ -57,8 +40,14 @@ internal sealed class ShortBall
 
     public Permutation this[int entry] => _entries[entry].Permutation;
 
+    /// <summary>The frame's number of the shape that the word leads to.</summary>
+    public int Shape(int entry) => _entries[entry].Shape;
+
     /// <summary>The cost of the word for a permutation; entries are in the order of cost.</summary>
     public int Cost(int entry) => _entries[entry].Cost;
+
+    /// <summary>The class of the last move of the word; -2 for the empty one.</summary>
+    public int LastClass(int entry) => _entries[entry].Move < 0 ? -2 : _frame.Moves[_entries[entry].Move].Class;
 
     /// <summary>The number of a permutation; -1 where no word here brings it about.</summary>
     public int Find(Permutation permutation) => _numbers.GetValueOrDefault(permutation, -1);
@@ -74,5 +63,34 @@ internal sealed class ShortBall
 
         moves.Reverse();
         return [.. moves.SelectMany(move => _frame.Moves[move].Steps)];
+    }
+
+    private bool Add(Permutation permutation, int shape, int cost, int before, int move)
+    {
+        if (!_numbers.TryAdd(permutation, Count))
+        {
+            return false;
+        }
+
+        _entries.Add((permutation, shape, cost, before, move));
+        return true;
+    }
+
+    private void Announce(int entry, SortedDictionary<int, List<(int Before, int Move)>> buckets)
+    {
+        var moves = _frame.Moves;
+        for (var move = 0; move < moves.Length; move++)
+        {
+            if (_frame.Targets[(Shape(entry) * moves.Length) + move] >= 0 && (moves[move].Class < 0 || LastClass(entry) != moves[move].Class))
+            {
+                var total = Cost(entry) + moves[move].Cost;
+                if (!buckets.TryGetValue(total, out var bucket))
+                {
+                    buckets.Add(total, bucket = []);
+                }
+
+                bucket.Add((entry, move));
+            }
+        }
     }
 }

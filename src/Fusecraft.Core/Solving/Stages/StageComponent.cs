@@ -51,7 +51,7 @@ internal sealed class StageComponent
         ushort[][] sources = [.. frame.Loops.Select(loop => loop.Inverse()).Select(back => Array.ConvertAll(sites, site => (ushort)place[back[site]]))];
         var store = new ShapeStore(words);
         var next = new ulong[words];
-        var lanes = new byte[sites.Length];
+        var lanes = new ushort[sites.Length];
         for (var i = 0; i < sites.Length; i++)
         {
             Put(next, i, dense[sites[i]], bits, perWord);
@@ -69,7 +69,7 @@ internal sealed class StageComponent
             var key = store.Key(state);
             for (var i = 0; i < lanes.Length; i++)
             {
-                lanes[i] = (byte)(key[i / perWord] >> (i % perWord * bits) & ((1UL << bits) - 1));
+                lanes[i] = (ushort)(key[i / perWord] >> (i % perWord * bits) & ((1UL << bits) - 1));
             }
 
             foreach (var source in sources)

@@ -9,6 +9,9 @@ internal sealed class StagePlan
     /// <summary>A search of a stage may have so many times as many states as its table may have entries.</summary>
     private const int SearchFactor = 1 << 17;
 
+    /// <summary>Where nothing else fits, one stage may be so much larger still.</summary>
+    private const int Stretch = 256;
+
     /// <summary>So many arcs are looked at in the search for subgroups.</summary>
     private const long MaxArcs = 4_000_000;
 
@@ -42,6 +45,15 @@ internal sealed class StagePlan
 
         var limit = new BigInteger(maxTable) * SearchFactor;
         var chain = whole.StateCount <= limit ? [whole] : Shortest([whole, .. PowerSubgroup.Find(vertexGroup, whole, MaxArcs, cancellation)], limit);
+        if (chain.Count == 0)
+        {
+            // A search that goes straight for the goal finds words in one stage that is too large for a thorough one.
+            var stretched = whole.StateCount <= limit * Stretch;
+            return new StagePlan(
+                whole.Frame,
+                (stretched ? Single(whole, maxTable, cancellation) : null) ?? PieceStages.Make(vertexGroup, whole.Frame, MaxComponent, maxTable, cancellation) ?? []);
+        }
+
         var stages = new List<Stage>();
         for (var i = 0; i < chain.Count; i++)
         {
@@ -56,6 +68,9 @@ internal sealed class StagePlan
 
         return new StagePlan(whole.Frame, stages);
     }
+
+    private static List<Stage>? Single(PowerSubgroup whole, int maxTable, CancellationToken cancellation) =>
+        Stage.Build(whole.Frame, whole.Group, [.. Enumerable.Range(0, whole.Frame.SiteCount)], MaxComponent, maxTable, cancellation) is { } stage ? [stage] : null;
 
     // Chains from the whole down to nothing, stage by stage: for each subgroup the least size of the largest stage on the way to it.
     private static List<PowerSubgroup> Shortest(List<PowerSubgroup> subgroups, BigInteger limit)
