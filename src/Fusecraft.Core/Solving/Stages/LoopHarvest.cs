@@ -37,11 +37,12 @@ internal sealed class LoopHarvest
     /// <summary>Loops that generate a stabilizer, cheapest first; null where the words known do not suffice.</summary>
     /// <param name="labels">The labels that stay.</param>
     /// <param name="stabilizer">All loops that leave them.</param>
-    public List<StageMove>? Loops(IReadOnlyList<int> labels, PermutationGroup stabilizer)
+    /// <param name="signs">Labels beyond the sites are signs; the loops are given with them.</param>
+    public List<StageMove>? Loops(IReadOnlyList<int> labels, PermutationGroup stabilizer, OrbitSigns signs)
     {
         var loops = new List<StageMove>();
         var seen = new HashSet<Permutation> { Permutation.Identity };
-        var buckets = Buckets(labels);
+        var buckets = Buckets([.. labels.Where(label => label < _mechanism.SiteCount)]);
         var made = new Made(stabilizer);
         var greatest = 2 * _ball.Cost(_ball.Count - 1);
         for (var cost = 1; cost <= greatest && !(made.IsAll && loops.Count >= FewLoops); cost++)
@@ -50,7 +51,7 @@ internal sealed class LoopHarvest
             foreach (var bucket in buckets)
             {
                 _cancellation.ThrowIfCancellationRequested();
-                Take(bucket, cost, labels, found, seen, found.Count + 2 + ((made.IsAll ? MoreLoops : TriedLoops) / buckets.Count));
+                Take(bucket, cost, labels, signs, found, seen, found.Count + 2 + ((made.IsAll ? MoreLoops : TriedLoops) / buckets.Count));
             }
 
             // Of many alike those that lead to something new, and the ones that move the fewest sites.
@@ -91,7 +92,7 @@ internal sealed class LoopHarvest
         return [.. buckets.Values.Where(bucket => bucket.Count > 1)];
     }
 
-    private void Take(List<int> bucket, int cost, IReadOnlyList<int> labels, List<StageMove> loops, HashSet<Permutation> seen, int most)
+    private void Take(List<int> bucket, int cost, IReadOnlyList<int> labels, OrbitSigns signs, List<StageMove> loops, HashSet<Permutation> seen, int most)
     {
         foreach (var first in bucket)
         {
@@ -113,7 +114,7 @@ internal sealed class LoopHarvest
                     continue;
                 }
 
-                var loop = _ball[first] * _ball[second].Inverse();
+                var loop = signs.Signed(_ball[first] * _ball[second].Inverse());
                 if (labels.All(label => loop[label] == label) && seen.Add(loop))
                 {
                     loops.Add(new StageMove([.. _ball.Word(first), .. Undone(_ball.Word(second))], loop, cost, -1));

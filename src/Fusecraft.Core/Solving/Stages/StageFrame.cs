@@ -15,15 +15,17 @@ internal sealed class StageFrame
     private readonly List<int> _shapes = [];
     private readonly List<(int Parent, int Move)> _tree = [];
 
-    private StageFrame(ShapeGroupoid groupoid, StageMove[] moves)
+    private StageFrame(ShapeGroupoid groupoid, StageMove[] moves, int siteCount)
     {
         _groupoid = groupoid;
         Moves = moves;
+        SiteCount = siteCount;
     }
 
     public StageMove[] Moves { get; }
 
-    public int SiteCount => _groupoid.Mechanism.SiteCount;
+    /// <summary>The number of points that the moves' permutations act on: the sites, and what else a descent keeps track of.</summary>
+    public int SiteCount { get; }
 
     public int ShapeCount => _shapes.Count;
 
@@ -46,9 +48,9 @@ internal sealed class StageFrame
     public int After(int shape, int step) => _groupoid.Target(_shapes[shape], step) is >= 0 and var target ? LocalOf(target) : -1;
 
     /// <summary>Finds the shapes; null where there are more than a number of them.</summary>
-    public static StageFrame? Explore(ShapeGroupoid groupoid, int baseShape, StageMove[] moves, int maxShapes, CancellationToken cancellation)
+    public static StageFrame? Explore(ShapeGroupoid groupoid, int baseShape, StageMove[] moves, int maxShapes, CancellationToken cancellation, int? siteCount = null)
     {
-        var frame = new StageFrame(groupoid, moves);
+        var frame = new StageFrame(groupoid, moves, siteCount ?? groupoid.Mechanism.SiteCount);
         var region = groupoid.RegionOf(baseShape);
         var targets = new List<int>();
         frame.Add(baseShape, -1, -1);

@@ -12,6 +12,9 @@ internal sealed class StagePlan
     /// <summary>Where nothing else fits, one stage may be so much larger still.</summary>
     private const int Stretch = 256;
 
+    /// <summary>Subgroups of powers are not looked for where more of them than this would be needed.</summary>
+    private const int MaxPowerStages = 4;
+
     /// <summary>So many arcs are looked at in the search for subgroups.</summary>
     private const long MaxArcs = 4_000_000;
 
@@ -30,6 +33,9 @@ internal sealed class StagePlan
     /// <summary>The stages; empty where none were found that fit.</summary>
     public IReadOnlyList<Stage> Stages { get; }
 
+    /// <summary>What the stages see beside the labels; null where they see labels alone.</summary>
+    public OrbitSigns? Signs { get; private init; }
+
     /// <summary>Chooses stages and builds their tables; null where the region has too many shapes.</summary>
     /// <param name="vertexGroup">The loops of the region at the base shape, where the descent ends.</param>
     /// <param name="metric">What a move costs.</param>
@@ -44,14 +50,20 @@ internal sealed class StagePlan
         }
 
         var limit = new BigInteger(maxTable) * SearchFactor;
-        var chain = whole.StateCount <= limit ? [whole] : Shortest([whole, .. PowerSubgroup.Find(vertexGroup, whole, MaxArcs, cancellation)], limit);
+        var chain = whole.StateCount <= limit ? [whole]
+            : whole.StateCount > BigInteger.Pow(limit, MaxPowerStages) ? []
+            : Shortest([whole, .. PowerSubgroup.Find(vertexGroup, whole, MaxArcs, cancellation)], limit);
         if (chain.Count == 0)
         {
             // A search that goes straight for the goal finds words in one stage that is too large for a thorough one.
             var stretched = whole.StateCount <= limit * Stretch;
-            return new StagePlan(
-                whole.Frame,
-                (stretched ? Single(whole, maxTable, cancellation) : null) ?? PieceStages.Make(vertexGroup, whole.Frame, MaxComponent, maxTable, cancellation) ?? []);
+            if (stretched && Single(whole, maxTable, cancellation) is { } single)
+            {
+                return new StagePlan(whole.Frame, single);
+            }
+
+            var signs = new OrbitSigns(moves, whole.Frame.SiteCount);
+            return new StagePlan(whole.Frame, PieceStages.Make(vertexGroup, whole.Frame, signs, MaxComponent, maxTable, cancellation) ?? []) { Signs = signs };
         }
 
         var stages = new List<Stage>();

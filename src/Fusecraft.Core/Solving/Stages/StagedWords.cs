@@ -72,7 +72,7 @@ internal sealed class StagedWords
         var mechanism = _group.Groupoid.Mechanism;
         List<Step>? best = null;
         var descent = new StagedDescent(Stages, isOver, cancellation);
-        descent.Run(Stages[0].Frame.LocalOf(shape), labels, maxNodes, word =>
+        descent.Run(Stages[0].Frame.LocalOf(shape), _plan!.Signs?.Signed(labels) ?? labels, maxNodes, word =>
         {
             var shortened = PathShortening.Shorten([.. word.Select(step => mechanism.Steps[step])]);
             if (best is null || IsBetter(shortened, best))
