@@ -169,6 +169,11 @@ public sealed partial class Solver
         RequireOwn(to);
         lock (_lock)
         {
+            if (from == to)
+            {
+                return new StagedResult(true, TurnPath.At(from.Shape ?? Mechanism.Home), 0, 1, "Nothing needs to be done.");
+            }
+
             if (IsOffBoard(from, "starts", out var reason) || IsOffBoard(to, "ends", out reason))
             {
                 return new StagedResult(false, null, 0, 1, reason);

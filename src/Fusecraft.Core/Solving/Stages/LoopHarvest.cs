@@ -109,7 +109,7 @@ internal sealed class LoopHarvest
                     break;
                 }
 
-                if (both < cost || _ball.LastClass(first) == _ball.LastClass(second) || _ball.Shape(first) != _ball.Shape(second))
+                if (both < cost || (_ball.LastClass(first) >= 0 && _ball.LastClass(first) == _ball.LastClass(second)) || _ball.Shape(first) != _ball.Shape(second))
                 {
                     continue;
                 }

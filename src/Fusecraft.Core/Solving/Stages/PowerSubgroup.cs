@@ -8,7 +8,7 @@ namespace Fusecraft.Solving;
 internal sealed class PowerSubgroup
 {
     /// <summary>Among more than this many choices only those with the fewest turns left out and the fewest replaced are looked at.</summary>
-    private const int MaxChoices = 800;
+    private const int MaxChoices = 260;
 
     private bool? _isClosed;
 

@@ -26,6 +26,10 @@ internal static class RunMoves
         var moves = new List<StageMove>();
         var seen = new HashSet<string>();
         var region = groupoid.RegionOf(baseShape);
+
+        // In a class that is open some run may be missing, so its moves may follow each other.
+        var isLarge = groupoid.Regions[region].ShapeCount > MaxShapes;
+        var open = mechanism.Steps.Where(step => isLarge && (step.Turn.HasGuard || !step.Turn.IsReversible)).Select(step => classes[step.Index]).ToHashSet();
         for (int shape = 0, tried = 0; shape < groupoid.ShapeCount && tried < MaxShapes; shape++)
         {
             if (groupoid.RegionOf(shape) != region)
@@ -36,19 +40,38 @@ internal static class RunMoves
             tried++;
             foreach (var runClass in classes.Distinct())
             {
-                foreach (var run in RunsAt(groupoid, shape, runClass, classes))
+                var runs = RunsAt(groupoid, shape, runClass, classes);
+                if (runs.Count > MaxRuns)
                 {
-                    if (seen.Add(string.Join(' ', run)))
-                    {
-                        var cost = metric.Kind == MetricKind.Run ? 1 : run.Sum(step => costs[step]);
-                        moves.Add(new StageMove(run, Product(mechanism, run), cost, runClass));
-                    }
+                    open.Add(runClass);
                 }
+
+                runs.ForEach(Add);
             }
         }
 
-        var kept = moves.Count <= MaxMoves ? moves : moves.FindAll(move => move.Steps.Length == 1);
+        if (isLarge)
+        {
+            // Steps that are free at none of the shapes looked at may be at others.
+            mechanism.Steps.Select(step => new[] { step.Index }).ToList().ForEach(Add);
+        }
+
+        if (moves.Count > MaxMoves)
+        {
+            open.UnionWith(moves.Where(move => move.Steps.Length > 1).Select(move => move.Class));
+            moves.RemoveAll(move => move.Steps.Length > 1);
+        }
+
+        var kept = moves.ConvertAll(move => open.Contains(move.Class) ? move with { Class = -1 } : move);
         return [.. kept.OrderBy(move => move.Class).ThenBy(move => move.Cost).ThenBy(move => move.Steps.Length)];
+
+        void Add(int[] run)
+        {
+            if (seen.Add(string.Join(' ', run)))
+            {
+                moves.Add(new StageMove(run, Product(mechanism, run), metric.Kind == MetricKind.Run ? 1 : run.Sum(step => costs[step]), classes[run[0]]));
+            }
+        }
     }
 
     /// <summary>The product of the permutations of some steps.</summary>

@@ -16,7 +16,7 @@ internal sealed class StagePlan
     private const int MaxPowerStages = 4;
 
     /// <summary>So many arcs are looked at in the search for subgroups.</summary>
-    private const long MaxArcs = 4_000_000;
+    private const long MaxArcs = 2_000_000;
 
     /// <summary>The greatest number of arrangements of one coset space.</summary>
     private const int MaxComponent = 250_000;

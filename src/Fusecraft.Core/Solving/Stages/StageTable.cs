@@ -45,7 +45,7 @@ internal sealed class StageTable
         int[] shapesBefore = Before(frame.Targets, moves);
         int[][] before = [.. chosen.Select(component => Before(component.After, frame.Loops.Count))];
         costs[0] = 0;
-        var greatestMove = frame.Moves.Max(move => move.Cost);
+        var greatestMove = frame.Moves.Select(move => move.Cost).DefaultIfEmpty(0).Max();
         Span<int> parts = stackalloc int[chosen.Length];
         for (int cost = 0, last = 0; cost <= last + greatestMove && cost < Greatest; cost++)
         {
