@@ -17,12 +17,10 @@ internal sealed class StagedDescent
 
     private const int MaxWidth = 1 << 14;
 
-    /// <summary>What is left counts so much in the first round, to have some word soon.</summary>
-    private static readonly int[] FirstWeights = [4, 2, 1];
-    private static readonly int[] Plain = [1];
-
-    /// <summary>Where the plain search of a stage is too long, heavier ones are tried.</summary>
-    private static readonly int[] Weights = [1, 2, 4, 8];
+    /// <summary>How much what is left counts, one search after the other: in the first round, to have some word soon, and in later ones.</summary>
+    private static readonly int[] FirstWeights = [3, 8];
+    private static readonly int[] FirstLastWeights = [8, 3, 1];
+    private static readonly int[] LaterWeights = [1];
 
     private readonly IReadOnlyList<Stage> _stages;
     private readonly Func<bool> _isOver;
@@ -71,7 +69,7 @@ internal sealed class StagedDescent
                 ends = Next(ends, stage, width);
             }
 
-            foreach (var weight in width == 1 ? FirstWeights : Plain)
+            foreach (var weight in width == 1 ? FirstLastWeights : LaterWeights)
             {
                 Finish(ends, weight, found);
             }
@@ -86,7 +84,7 @@ internal sealed class StagedDescent
     // The most promising ends of a stage.
     private List<End> Next(List<End> starts, int stage, int width)
     {
-        foreach (var weight in Weights)
+        foreach (var weight in width == 1 ? FirstWeights : LaterWeights)
         {
             if (Next(starts, stage, width, weight) is { Count: > 0 } ends)
             {
@@ -161,7 +159,8 @@ internal sealed class StagedDescent
         var stage = _stages.Count - 1;
         var words = new StageWords(_stages[stage], IsOver) { Weight = weight };
         var next = starts.ConvertAll(start => start.Left * weight);
-        var share = weight == 1 ? _maxNodes : _nodes + ((_maxNodes - _nodes) / 2);
+        // All of the budget for a first word, or where nothing else is left to do; else a part.
+        var share = _least == int.MaxValue || (_stages.Count == 1 && weight == 1) ? _maxNodes : _nodes + ((_maxNodes - _nodes) / (starts.Count == 1 ? 4 : 1));
         while (next.Exists(cost => cost < int.MaxValue) && _nodes < Math.Min(share, _maxNodes))
         {
             var limit = Enumerable.Range(0, starts.Count).Min(i => next[i] == int.MaxValue ? int.MaxValue : starts[i].Cost + next[i]);

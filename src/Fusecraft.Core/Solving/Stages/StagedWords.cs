@@ -8,7 +8,7 @@ namespace Fusecraft.Solving;
 internal sealed class StagedWords
 {
     /// <summary>The first of the budgets that a time limit goes through, each twice the one before.</summary>
-    private const long FirstBudget = 50_000;
+    private const long FirstBudget = 200_000;
 
     private readonly StagedOptions _options;
     private readonly StagePlan? _plan;
