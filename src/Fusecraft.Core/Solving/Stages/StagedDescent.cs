@@ -17,10 +17,16 @@ internal sealed class StagedDescent
 
     private const int MaxWidth = 1 << 14;
 
-    /// <summary>How much what is left counts, one search after the other: in the first round, to have some word soon, and in later ones.</summary>
-    private static readonly int[] FirstWeights = [3, 8];
-    private static readonly int[] FirstLastWeights = [8, 3, 1];
-    private static readonly int[] LaterWeights = [1];
+    /// <summary>Where the budget ends before there is any word, it is raised by this factor, and once more.</summary>
+    private const int Grace = 5;
+
+    /// <summary>So many ends are kept in the first round: enough that one of them is soon followed to the goal.</summary>
+    private const int FirstWidth = 32;
+
+    /// <summary>How much what is left counts, one search after the other: where there is one stage alone, to have some word soon, and else.</summary>
+    private static readonly int[] LoneWeights = [4, 2, 1];
+    private static readonly int[] LastWeights = [1];
+    private static readonly int[] EarlyWeights = [1, 2];
 
     private readonly IReadOnlyList<Stage> _stages;
     private readonly Func<bool> _isOver;
@@ -45,7 +51,7 @@ internal sealed class StagedDescent
     /// <summary>Finds words, each cheaper than those before.</summary>
     /// <param name="shape">The number of the shape in the first stage's frame.</param>
     /// <param name="labels">Where the labels are; the word brings all of them home at the base shape.</param>
-    /// <param name="maxNodes">How many moves may be tried.</param>
+    /// <param name="maxNodes">How many moves may be tried; more while there is no word at all.</param>
     /// <param name="found">Given the steps of each word.</param>
     public void Run(int shape, Permutation labels, long maxNodes, Action<int[]> found)
     {
@@ -61,7 +67,17 @@ internal sealed class StagedDescent
             return;
         }
 
-        for (var width = 1; width <= MaxWidth && _nodes < _maxNodes; width *= Widening)
+        Rounds(start, found);
+        for (var grace = Grace; grace <= Grace * Grace && _least == int.MaxValue && !IsOver(); grace *= Grace)
+        {
+            _maxNodes = maxNodes * grace;
+            Rounds(start, found);
+        }
+    }
+
+    private void Rounds(End start, Action<int[]> found)
+    {
+        for (var width = FirstWidth; width <= MaxWidth && _nodes < _maxNodes; width *= Widening)
         {
             List<End> ends = [start];
             for (var stage = 0; stage + 1 < _stages.Count && ends.Count > 0; stage++)
@@ -69,7 +85,7 @@ internal sealed class StagedDescent
                 ends = Next(ends, stage, width);
             }
 
-            foreach (var weight in width == 1 ? FirstLastWeights : LaterWeights)
+            foreach (var weight in _stages.Count == 1 ? LoneWeights : LastWeights)
             {
                 Finish(ends, weight, found);
             }
@@ -84,7 +100,7 @@ internal sealed class StagedDescent
     // The most promising ends of a stage.
     private List<End> Next(List<End> starts, int stage, int width)
     {
-        foreach (var weight in width == 1 ? FirstWeights : LaterWeights)
+        foreach (var weight in EarlyWeights)
         {
             if (Next(starts, stage, width, weight) is { Count: > 0 } ends)
             {
@@ -159,8 +175,7 @@ internal sealed class StagedDescent
         var stage = _stages.Count - 1;
         var words = new StageWords(_stages[stage], IsOver) { Weight = weight };
         var next = starts.ConvertAll(start => start.Left * weight);
-        // All of the budget for a first word, or where nothing else is left to do; else a part.
-        var share = _least == int.MaxValue || (_stages.Count == 1 && weight == 1) ? _maxNodes : _nodes + ((_maxNodes - _nodes) / (starts.Count == 1 ? 4 : 1));
+        var share = weight == 1 ? _maxNodes : _nodes + ((_maxNodes - _nodes) / 2);
         while (next.Exists(cost => cost < int.MaxValue) && _nodes < Math.Min(share, _maxNodes))
         {
             var limit = Enumerable.Range(0, starts.Count).Min(i => next[i] == int.MaxValue ? int.MaxValue : starts[i].Cost + next[i]);

@@ -9,7 +9,7 @@ public sealed class StagedOptions
     /// <summary>How the length of a word is counted.</summary>
     public Metric Metric { get; init; } = Metric.Step;
 
-    /// <summary>How many moves may be tried for one word; more find shorter ones. Some ten million take a second.</summary>
+    /// <summary>How many moves may be tried for one word; more find shorter ones. Some ten million take a second. Up to 25 times as many are tried where there is no word yet.</summary>
     public long MaxNodes { get; init; } = 1_000_000;
 
     /// <summary>

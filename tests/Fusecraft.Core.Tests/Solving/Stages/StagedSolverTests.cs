@@ -22,7 +22,7 @@ public class StagedSolverTests
     public static TheoryData<string, int> Mechanisms => new()
     {
         { "cube 2", 400 },
-        { "cube 3", 120 },
+        { "cube 3", 60 },
         { "cube 4", 6 },
         { "pair", 60 },
         { "docs/workshop/weir-gate.fuse.json", 60 },
