@@ -13,6 +13,9 @@ switch (args)
     case ["distance-tables", ..]:
         DistanceTables.Run(args[1..]);
         return 0;
+    case ["short-words", ..]:
+        ShortWords.Run(args[1..]);
+        return 0;
     case ["small-graphs"]:
         SmallGraphs.Run();
         return 0;

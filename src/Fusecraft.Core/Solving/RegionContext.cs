@@ -17,6 +17,7 @@ internal sealed class RegionContext
 
     private readonly ulong _seed;
     private Func<Permutation, List<Step>?>? _undo;
+    private StagedWords? _staged;
 
     public RegionContext(VertexGroup group, ulong seed)
     {
@@ -45,6 +46,9 @@ internal sealed class RegionContext
             return table.Undo;
         }
     }
+
+    /// <summary>Short words by stages; chosen and filled at the first call.</summary>
+    public StagedWords Staged(StagedOptions options, CancellationToken cancellation) => _staged ??= new StagedWords(Group, options, cancellation);
 
     // Short loops from a search over states, and those that generate the group for certain.
     private List<TurnPath> Loops(CancellationToken cancellation)

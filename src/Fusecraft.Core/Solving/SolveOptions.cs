@@ -21,6 +21,14 @@ public sealed class SolveOptions
     /// <summary>A search ends when it holds this many states. Takes about 100 bytes a state on a cube of 54 sites.</summary>
     public int MaxStates { get; init; } = 1_000_000;
 
+    /// <summary>
+    /// Where a search ended, so many moves are tried for a short word by stages; more find shorter ones. 0 to do without stages, whose tables take seconds to fill, and be content with a longer word.
+    /// </summary>
+    public long MaxStagedMoves { get; init; } = 1_000_000;
+
+    /// <summary>Where a search ended and all states of the region fit a distance table of this many bytes, one is made and kept; 0 to do without. See <see cref="DistanceTable"/>.</summary>
+    public long MaxTableBytes { get; init; } = 100_000_000;
+
     /// <summary>The exploration that proofs rest on ends when it has found this many shapes.</summary>
     public int MaxShapes { get; init; } = 5_000_000;
 

@@ -43,6 +43,11 @@ public sealed partial class Solver
             return far;
         }
 
+        if (proof.Context is not null && ByTable(from, to, proof.Context, progress, cancellation) is { } exact)
+        {
+            return exact;
+        }
+
         // A word made of known ones is at hand at once; where it is short enough, nothing more was asked for.
         if (Options.MaxLength is not null && proof.Context is not null && Long(from, to, proof.Context, search.LowerBound, "", cancellation) is { HasPath: true } made
             && Options.Metric.LengthOf(made.Path) <= Options.MaxLength)
@@ -87,6 +92,29 @@ public sealed partial class Solver
             StateSearch.Outcome.NoneThatShort => TooShort(),
             _ => null,
         };
+    }
+
+    // Where all states of the region fit a table, it knows every shortest path to the end: labels renamed, the end is the table's base state.
+    private SolveResult? ByTable(State from, State to, RegionContext context, IProgress<SolveProgress>? progress, CancellationToken cancellation)
+    {
+        var key = (context.Group, context.Groupoid.IndexOf(to.Shape!));
+        if (!_tables.TryGetValue(key, out var table))
+        {
+            var options = new DistanceOptions { Metric = Options.Metric, MaxBytes = Math.Max(1, Options.MaxTableBytes), DegreeOfParallelism = context.Groupoid.DegreeOfParallelism };
+            var numbering = context.Group.StateCount / 8 > options.MaxBytes ? null : StateNumbering.Of(context.Group.MovedTo(key.Item2));
+            progress?.Report(new SolveProgress("making a table of all states", 0));
+            table = numbering is null || DistanceTable.BytesFor(numbering, options) > options.MaxBytes ? null : DistanceTable.BuildToBase(numbering, options, cancellation);
+            _tables.Add(key, table);
+        }
+
+        if (table?.PathToBase(from, to.Labels.Inverse() * from.Labels) is not { } path)
+        {
+            return null;
+        }
+
+        return Options.Metric.LengthOf(path) <= (Options.MaxLength ?? long.MaxValue)
+            ? SolveResult.Shortest(Replayed(from, path.Steps, end => end == to), Options.Metric)
+            : TooShort();
     }
 
     // Whether a path exists, by shapes and vertex group. The context is of the region of both states where a path is proven to exist.
@@ -157,20 +185,69 @@ public sealed partial class Solver
         return (there, there.Permutation.Inverse() * wanted * outward.Permutation.Inverse(), outward);
     }
 
-    private static SolveResult Long(State from, State to, RegionContext context, int lowerBound, string unsettled, CancellationToken cancellation)
+    private SolveResult Long(State from, State to, RegionContext context, int lowerBound, string unsettled, CancellationToken cancellation)
     {
-        var (there, loop, outward) = LoopFor(
-            context, from.Labels.Inverse() * to.Labels, context.Groupoid.IndexOf(from.Shape!), context.Groupoid.IndexOf(to.Shape!));
-        if (context.Undo(loop.Inverse(), cancellation) is not { } word)
+        if (LongWord(from, to, context, Options.MaxStagedMoves > 0, cancellation) is not { } word)
         {
             return SolveResult.Unsettled("The vertex group proves that a path exists, but no word of reasonable length was found for it.", true);
         }
 
-        var steps = PathShortening.Shorten([.. there.Steps, .. word, .. outward.Steps]);
         return SolveResult.Found(
-            Replayed(from, steps, end => end == to),
-            "Made from the shape tree and a stabilizer chain with words. " +
-            (unsettled.Length > 0 ? unsettled : $"A search proved that no path has fewer than {lowerBound} steps before its budget ended."));
+            Replayed(from, word.Steps, end => end == to),
+            $"{word.How}. {(unsettled.Length > 0 ? unsettled : $"A search proved that no path has fewer than {lowerBound} steps before its budget ended.")}");
+    }
+
+    // By stages where they fit, else by the shape tree and a stabilizer chain with words; both end at the base shape, from where the tree leads on.
+    private (List<Step> Steps, string How, long Nodes)? LongWord(State from, State to, RegionContext context, bool byStages, CancellationToken cancellation)
+    {
+        var start = context.Groupoid.IndexOf(from.Shape!);
+        var (there, loop, outward) = LoopFor(context, from.Labels.Inverse() * to.Labels, start, context.Groupoid.IndexOf(to.Shape!));
+        var staged = byStages ? context.Staged(_staged, cancellation) : null;
+        if (staged?.Find(start, outward.Permutation * to.Labels.Inverse() * from.Labels, cancellation) is var (word, nodes))
+        {
+            return (staged.Shorten(start, [.. word, .. outward.Steps], cancellation), "Made by stages", nodes);
+        }
+
+        if (context.Undo(loop.Inverse(), cancellation) is not { } undoing)
+        {
+            return null;
+        }
+
+        List<Step> steps = [.. there.Steps, .. undoing, .. outward.Steps];
+        return (staged?.Shorten(start, steps, cancellation) ?? PathShortening.Shorten(steps), "Made from the shape tree and a stabilizer chain with words", 1);
+    }
+
+    /// <summary>A short word by stages, without a search for a shortest one. See <see cref="StagedSolver"/>.</summary>
+    internal StagedResult RouteByStages(State from, State to, CancellationToken cancellation)
+    {
+        RequireOwn(from);
+        RequireOwn(to);
+        lock (_lock)
+        {
+            if (from == to)
+            {
+                return new StagedResult(true, TurnPath.At(from.Shape ?? Mechanism.Home), 0, 1, "Nothing needs to be done.");
+            }
+
+            if (IsOffBoard(from, "starts", out var reason) || IsOffBoard(to, "ends", out reason))
+            {
+                return new StagedResult(false, null, 0, 1, reason);
+            }
+
+            var proof = Prove(from, to, cancellation);
+            if (proof.Context is null)
+            {
+                return new StagedResult(proof.Impossible is null ? null : false, null, 0, 1, proof.Impossible ?? proof.Unsettled!);
+            }
+
+            if (LongWord(from, to, proof.Context, byStages: true, cancellation) is not { } word)
+            {
+                return new StagedResult(true, null, 0, 1, "The vertex group proves that a path exists, but no word of reasonable length was found for it.");
+            }
+
+            var path = Replayed(from, word.Steps, end => end == to);
+            return new StagedResult(true, path, _staged.Metric.LengthOf(path), word.Nodes, word.How + ".");
+        }
     }
 
     private string Explain(MembershipEvidence evidence, RegionContext context)

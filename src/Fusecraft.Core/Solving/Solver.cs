@@ -7,7 +7,7 @@ namespace Fusecraft.Solving;
 
 /// <summary>
 /// Finds turn paths between states of a mechanism, or proves that there is none. A search from both ends finds shortest paths while they are short; exploration and vertex group prove what cannot be
-/// reached; where a path exists but is too long to search for, the shape tree and a stabilizer chain with words make one.
+/// reached; where a path exists but is too long to search for, a descent by stages makes a short one (see <see cref="StagedSolver"/>), or else the shape tree and a stabilizer chain with words.
 /// </summary>
 /// <remarks>
 /// Keeps what it has found out about the mechanism, so solving many states with one solver is cheaper than one solver each. Every path is replayed before it is given. The answers depend on the
@@ -21,6 +21,8 @@ public sealed partial class Solver
     private readonly Lock _lock = new();
     private readonly Dictionary<int, RegionContext> _contexts = [];
     private readonly Lazy<BoundedSearch> _bounded;
+    private readonly StagedOptions _staged;
+    private readonly Dictionary<(VertexGroup Group, int Shape), DistanceTable?> _tables = [];
     private ShapeGroupoid? _fromHome;
 
     /// <summary>Makes a solver.</summary>
@@ -29,6 +31,11 @@ public sealed partial class Solver
     /// <exception cref="ArgumentOutOfRangeException">A budget is below 1, or the greatest length is negative.</exception>
     /// <exception cref="ArgumentException">The metric weighs turns that the mechanism does not have.</exception>
     public Solver(Mechanism mechanism, SolveOptions? options = null)
+        : this(mechanism, options, null)
+    {
+    }
+
+    internal Solver(Mechanism mechanism, SolveOptions? options, StagedOptions? staged)
     {
         ArgumentNullException.ThrowIfNull(mechanism);
         options ??= SolveOptions.Default;
@@ -36,10 +43,13 @@ public sealed partial class Solver
         ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxShapes, 1, nameof(options));
         ArgumentOutOfRangeException.ThrowIfNegative(options.MaxLength ?? 0, nameof(options));
         ArgumentOutOfRangeException.ThrowIfLessThan(options.MaxNodes, 1, nameof(options));
+        ArgumentOutOfRangeException.ThrowIfNegative(options.MaxStagedMoves, nameof(options));
+        ArgumentOutOfRangeException.ThrowIfNegative(options.MaxTableBytes, nameof(options));
         options.Metric.RequireTurnsOf(mechanism, nameof(options));
         Mechanism = mechanism;
         Options = options;
         _bounded = new Lazy<BoundedSearch>(() => new BoundedSearch(mechanism, new BoundedOptions { Metric = options.Metric, MaxNodes = options.MaxNodes, TimeLimit = options.TimeLimit }));
+        _staged = staged ?? new StagedOptions { MaxNodes = Math.Max(1, options.MaxStagedMoves), Metric = options.Metric };
     }
 
     /// <summary>The mechanism.</summary>

@@ -121,8 +121,8 @@ public sealed class StateNumbering
     /// <summary>The permutation τ of the tree path from the base shape to the shape at a place.</summary>
     internal Permutation PathTo(int place) => Digits.Path(place);
 
-    /// <summary>The number of the state with the labels <c>b * reached</c>, where the permutation reached is that of a path from the base shape to the shape at a place.</summary>
-    internal long Number(int place, Permutation reached) => (place * _order) + Digits.Rank(place, reached);
+    /// <summary>The number of the state with the labels <c>b * reached</c>, where the permutation reached is that of a path from the base shape to the shape at a place; -1 where there is no such path.</summary>
+    internal long Number(int place, Permutation reached) => Digits.Rank(place, reached) is >= 0 and var number ? (place * _order) + number : -1;
 
     internal RowTable Tabulate(MoveSet moves, int threads, CancellationToken cancellation) =>
         Digits.Tabulate(moves, RowSplit.For(Digits.OrbitLengths, ShapeCount, moves.Width), threads, cancellation);

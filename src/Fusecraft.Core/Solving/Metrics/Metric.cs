@@ -50,13 +50,21 @@ public sealed class Metric
     public long LengthOf(TurnPath path)
     {
         ArgumentNullException.ThrowIfNull(path);
-        if (Kind != MetricKind.Run)
+        return LengthOf(path.Steps, Kind == MetricKind.Run ? RunClasses(path.Mechanism) : []);
+    }
+
+    /// <summary>The length of steps in a row.</summary>
+    /// <param name="steps">The steps.</param>
+    /// <param name="runClasses">The mechanism's <see cref="RunClasses"/>; not looked at unless runs are counted.</param>
+    internal long LengthOf(IReadOnlyList<Step> steps, int[] runClasses)
+    {
+        var length = 0L;
+        for (var i = 0; i < steps.Count; i++)
         {
-            return path.Steps.Sum(step => (long)WeightOf(step));
+            length += Kind != MetricKind.Run ? WeightOf(steps[i]) : i == 0 || runClasses[steps[i].Index] != runClasses[steps[i - 1].Index] ? 1 : 0;
         }
 
-        var classes = RunClasses(path.Mechanism);
-        return path.Steps.Where((step, i) => i == 0 || classes[step.Index] != classes[path.Steps[i - 1].Index]).LongCount();
+        return length;
     }
 
     /// <summary><c>step</c>, <c>run</c> or <c>weights</c>.</summary>

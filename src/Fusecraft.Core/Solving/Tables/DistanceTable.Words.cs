@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using System.Numerics;
 using Fusecraft.Groupoids;
 using Fusecraft.Mechanisms;
+using Fusecraft.Permutations;
 
 namespace Fusecraft.Solving;
 
@@ -14,8 +15,17 @@ public sealed partial class DistanceTable
     /// <exception cref="ArgumentException">The state belongs to another mechanism.</exception>
     public TurnPath? ShortestPath(State state)
     {
-        var number = Numbering.Rank(state);
-        if (number < 0 || DistanceOf(number) is not (>= 0 and var distance))
+        ArgumentNullException.ThrowIfNull(state);
+        return Numbering.Rank(state) is >= 0 and var number ? PathOf(number, state.Shape!) : null;
+    }
+
+    /// <summary>A shortest path from a state whose labels are those of the base state followed by a permutation; null where it has no distance. For tables that lead to the base.</summary>
+    internal TurnPath? PathToBase(State from, Permutation reached) =>
+        Numbering.Number(Numbering.Region.PlaceOf(Numbering.Group.Groupoid.IndexOf(from.Shape!)), reached) is >= 0 and var number ? PathOf(number, from.Shape!) : null;
+
+    private TurnPath? PathOf(long number, Shape shape)
+    {
+        if (DistanceOf(number) is not (>= 0 and var distance))
         {
             return null;
         }
@@ -36,7 +46,7 @@ public sealed partial class DistanceTable
 
         if (Origin == DistanceOrigin.ToGoal)
         {
-            return TurnPath.Follow(state.Shape!, moves.SelectMany(move => move.Steps));
+            return TurnPath.Follow(shape, moves.SelectMany(move => move.Steps));
         }
 
         // Where moves are their own reverses, those that lead back are found, and undone here.
@@ -213,7 +223,7 @@ public sealed partial class DistanceTable
 
     private bool HasFreeMoves => _moves.Moves.Any(move => move.Cost == 0);
 
-    private bool IsStart(long number) => Origin == DistanceOrigin.FromBase ? number == 0 : GoalStates.Contains(Numbering.Unrank(number));
+    private bool IsStart(long number) => _leadsToBase || Origin == DistanceOrigin.FromBase ? number == 0 : GoalStates.Contains(Numbering.Unrank(number));
 
     private IEnumerable<(int Slot, long State)> NearerMoves(long number, int distance)
     {

@@ -18,6 +18,7 @@ public sealed partial class DistanceTable : IDisposable
     private readonly ResidueTable? _residues;
     private readonly WideTable? _wide;
     private readonly long _order;
+    private bool _leadsToBase;
 
     // The moves lead towards the states of distance 0.
     private DistanceTable(StateNumbering numbering, DistanceOptions options, MoveSet moves, RowTable rows, ResidueTable? residues, WideTable? wide, IEnumerable<long> counts)
@@ -78,8 +79,21 @@ public sealed partial class DistanceTable : IDisposable
                 $"A table of the {numbering.Count} states of {numbering.Mechanism.Name} takes about {needed} bytes; {options.MaxBytes} are allowed.");
         }
 
+        return Build(numbering, options, options.Origin == DistanceOrigin.FromBase ? [0L] : GoalStates.Of(numbering), progress, cancellationToken);
+    }
+
+    /// <summary>A table of the distances to the base state, whatever the goal.</summary>
+    internal static DistanceTable BuildToBase(StateNumbering numbering, DistanceOptions options, CancellationToken cancellation)
+    {
+        var table = Build(numbering, options with { Origin = DistanceOrigin.ToGoal }, [0L], null, cancellation);
+        table._leadsToBase = true;
+        return table;
+    }
+
+    private static DistanceTable Build(
+        StateNumbering numbering, DistanceOptions options, IEnumerable<long> starts, IProgress<DistanceProgress>? progress, CancellationToken cancellationToken)
+    {
         var (forward, descent) = Moves(numbering, options, cancellationToken);
-        var starts = options.Origin == DistanceOrigin.FromBase ? [0L] : GoalStates.Of(numbering);
         var along = numbering.Tabulate(forward, options.DegreeOfParallelism, cancellationToken);
         if (ReferenceEquals(forward, descent))
         {
