@@ -49,8 +49,7 @@ public sealed partial class Solver
         }
 
         // A word made of known ones is at hand at once; where it is short enough, nothing more was asked for.
-        if (Options.MaxLength is not null && proof.Context is not null && Long(from, to, proof.Context, search.LowerBound, "", cancellation) is { HasPath: true } made
-            && Options.Metric.LengthOf(made.Path) <= Options.MaxLength)
+        if (countsSteps && Made("") is { } made)
         {
             return made;
         }
@@ -72,7 +71,7 @@ public sealed partial class Solver
             unsettled = $"{ended}; no path is shorter than {bounded.LowerBound}, counted by {Options.Metric}.";
             if (Options.MaxLength is not null)
             {
-                return SolveResult.Unsettled(unsettled);
+                return (countsSteps ? null : Made(unsettled)) ?? SolveResult.Unsettled(unsettled);
             }
         }
 
@@ -83,6 +82,12 @@ public sealed partial class Solver
 
         progress?.Report(new SolveProgress("making words", 0));
         return Long(from, to, proof.Context, search.LowerBound, unsettled, cancellation);
+
+        // Where a greatest length is asked for and a word made of known ones keeps it.
+        SolveResult? Made(string reason) =>
+            Options.MaxLength is { } most && proof.Context is not null && Long(from, to, proof.Context, search.LowerBound, reason, cancellation) is { HasPath: true } word && Options.Metric.LengthOf(word.Path) <= most
+                ? word
+                : null;
 
         SolveResult? Search(int maxStates) => search.Run(maxStates, Options.MaxLength) switch
         {
