@@ -62,6 +62,7 @@ internal static class Cli
         root.Add(RouteCommand.Create(terminal));
         root.Add(SolveCommand.Create(terminal));
         root.Add(TraceCommand.Create(terminal));
+        root.Add(MixingCommand.Create(terminal));
         Help.Install(root);
         var version = root.Options.OfType<VersionOption>().Single();
         version.Description = "Shows the version.";

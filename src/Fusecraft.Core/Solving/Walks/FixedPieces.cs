@@ -3,6 +3,8 @@ namespace Fusecraft.Solving;
 /// <summary>Splits work on many states into pieces that depend on nothing but the number of states, and adds what the pieces give in their order: so no sum depends on the number of threads.</summary>
 internal sealed class FixedPieces
 {
+    // The states of a piece, up to a unit more.
+    private const int Most = 4096;
     private readonly ParallelOptions _options;
     private readonly (double A, double B, double C)[] _sums;
 
@@ -17,9 +19,6 @@ internal sealed class FixedPieces
         _sums = new (double, double, double)[(count + Size - 1) / Size];
         _options = new ParallelOptions { MaxDegreeOfParallelism = threads, CancellationToken = cancellation };
     }
-
-    /// <summary>The number of states of a piece, up to a unit more.</summary>
-    public static int Most => 4096;
 
     public int Count { get; }
 
@@ -54,6 +53,6 @@ internal sealed class FixedPieces
 
         return (a, b, c);
 
-        void Do(int i) => _sums[i] = work(i * Size, Math.Min(Count, (i + 1) * Size));
+        void Do(int i) => _sums[i] = work(i * Size, (int)Math.Min(Count, (i + 1L) * Size));
     }
 }

@@ -143,41 +143,75 @@ internal sealed class LanczosIteration(WalkSpace space, WalkCycle cycle, FixedPi
         return (alpha, beta);
     }
 
-    // Takes the vectors known, and shares of the last two, out of the next; gives its length.
+    // Takes shares of the last two vectors, and the vectors known, out of the next; gives its length.
     private double TakeOut(double[]? now, double alpha, double beta)
     {
-        var (along, across, _) = pieces.Sum((first, last) =>
+        if (now is not null)
         {
-            var (sum, signed) = (0.0, 0.0);
-            for (var state = first; state < last; state++)
+            pieces.Sum((first, last) =>
             {
-                if (now is not null)
+                for (var state = first; state < last; state++)
                 {
                     _next[state] -= (alpha * now[state]) + (beta * _before[state]);
                 }
 
-                var part = _next[state] * _roots[state / space.OfShape];
-                sum += part;
-                signed += Sign(state) * part;
-            }
+                return default;
+            });
+        }
 
-            return (sum, signed, 0);
-        });
-        return Math.Sqrt(pieces.Sum((first, last) =>
-        {
-            var sum = 0.0;
-            for (var state = first; state < last; state++)
-            {
-                _next[state] -= _roots[state / space.OfShape] * (along + (Sign(state) * across));
-                sum += _next[state] * _next[state];
-            }
-
-            return (sum, 0, 0);
-        }).A);
+        var (along, across, _) = pieces.Sum((first, last) => Shares(first, last));
+        return Math.Sqrt(pieces.Sum((first, last) => (Subtract(along, across, first, last), 0, 0)).A);
     }
 
-    // 0 where there is no second vector to take out.
-    private int Sign(int state) => cycle.Period == 1 ? 0 : 1 - (2 * cycle.ClassOf(state));
+    private (double Along, double Across, double None) Shares(int first, int last)
+    {
+        var (along, across) = (0.0, 0.0);
+        for (var at = first; at < last;)
+        {
+            var (end, root) = Run(at, last);
+            for (var state = at; state < end; state++)
+            {
+                along += root * _next[state];
+            }
+
+            for (var state = at; state < end && cycle.Period == 2; state++)
+            {
+                across += root * _next[state] * Sign(state);
+            }
+
+            at = end;
+        }
+
+        return (along, across, 0);
+    }
+
+    private double Subtract(double along, double across, int first, int last)
+    {
+        var sum = 0.0;
+        for (var at = first; at < last;)
+        {
+            var (end, root) = Run(at, last);
+            for (var state = at; state < end; state++)
+            {
+                var rest = _next[state] - (root * (cycle.Period == 2 ? along + (Sign(state) * across) : along));
+                _next[state] = rest;
+                sum += rest * rest;
+            }
+
+            at = end;
+        }
+
+        return sum;
+    }
+
+    private int Sign(int state) => 1 - (2 * cycle.Classes[state]);
+
+    // The states from one on that have its shape, and the root of the stationary probability of each.
+    private (int End, double Root) Run(int at, int last)
+    {
+        var place = at / space.OfShape;
+        return ((int)Math.Min(last, (place + 1L) * space.OfShape), _roots[place]);
+    }
 
     private void Normalise(double length) => pieces.Sum((first, last) =>
     {

@@ -57,22 +57,31 @@ public sealed partial class RandomWalk
     // From uniform, from stationary, from the limit.
     private (double A, double B, double C) Differences(double[] distribution, int turns, int first, int last)
     {
-        var uniform = 1.0 / StateCount;
+        var (period, rest, uniform) = (Period, turns % Period, 1.0 / StateCount);
         var (a, b, c) = (0.0, 0.0, 0.0);
         for (var at = first; at < last;)
         {
-            var place = at / _space.OfShape;
-            var end = (int)Math.Min(last, (place + 1L) * _space.OfShape);
-            var stationary = _space.Rates.Stationary[place] / _space.OfShape;
+            var (end, stationary) = Run(at, last);
+            if (period == 1)
+            {
+                for (; at < end; at++)
+                {
+                    a += Math.Abs(distribution[at] - uniform);
+                    b += Math.Abs(distribution[at] - stationary);
+                }
+
+                continue;
+            }
+
             for (; at < end; at++)
             {
                 var here = distribution[at];
                 a += Math.Abs(here - uniform);
                 b += Math.Abs(here - stationary);
-                c += Period > 1 ? Math.Abs(here - Limit(at, turns)) : 0;
+                c += Math.Abs(here - (_cycle.Classes[at] == rest ? period * stationary : 0));
             }
         }
 
-        return (a, b, Period > 1 ? c : b);
+        return (a, b, period == 1 ? b : c);
     }
 }

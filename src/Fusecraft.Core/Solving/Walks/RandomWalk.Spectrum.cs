@@ -64,7 +64,7 @@ public sealed partial class RandomWalk
             values.Add(new Eigenvalue(-1, 1));
         }
 
-        return new WalkSpectrum(this, isComplete: false, values.ToImmutable(), error, Limit(0, 0));
+        return new WalkSpectrum(this, isComplete: false, values.ToImmutable(), error, Period * _space.Rates.Stationary[0] / _space.OfShape);
     }
 
     private WalkSpectrum Complete(List<Complex> values)
@@ -81,7 +81,7 @@ public sealed partial class RandomWalk
             found.Add(new Eigenvalue(alike.Aggregate(Complex.Zero, (sum, value) => sum + value) / alike.Count, alike.Count));
         }
 
-        return new WalkSpectrum(this, isComplete: true, found.ToImmutable(), DenseError, Limit(0, 0));
+        return new WalkSpectrum(this, isComplete: true, found.ToImmutable(), DenseError, Period * _space.Rates.Stationary[0] / _space.OfShape);
     }
 
     private IEnumerable<(int Row, int Column, double Value)> Entries()

@@ -66,8 +66,23 @@ public sealed partial class RandomWalk
     /// <summary>By how much one turn changes the stationary distribution as it was computed: the sum of all differences.</summary>
     public double StationaryResidual => StationaryShapes.Residual(_space.Rates, _space.Rates.Stationary);
 
+    /// <summary>The distance of the stationary distribution from uniform.</summary>
+    public double StationaryFromUniform
+    {
+        get
+        {
+            var sum = 0.0;
+            foreach (var weight in _space.Rates.Stationary)
+            {
+                sum += Math.Abs(weight - (1.0 / ShapeCount));
+            }
+
+            return IsUniform ? 0 : sum / 2;
+        }
+    }
+
     /// <summary>What the distance from uniform comes down to in the long run: the least of its limits along the numbers of turns alike modulo the period. 0 where the period is 1 and the walk tends to uniform.</summary>
-    public double LeastFromUniform => Enumerable.Range(0, Period).Min(LimitFromUniform);
+    public double LeastFromUniform => Period == 1 && IsUniform ? 0 : Enumerable.Range(0, Period).Min(LimitFromUniform);
 
     /// <summary>Makes the walk over the states of the home region.</summary>
     /// <param name="mechanism">The mechanism; it is explored and its vertex group at home computed.</param>
@@ -150,22 +165,26 @@ public sealed partial class RandomWalk
 
     private FixedPieces Pieces(CancellationToken cancellation) => new(StateCount, _space.Unit, Options.DegreeOfParallelism, cancellation);
 
-    private double LimitFromUniform(int turns)
+    // The limit along the numbers of turns alike to this one modulo the period.
+    private double LimitFromUniform(int turns) => Pieces(default).Sum((first, last) =>
     {
-        var uniform = 1.0 / StateCount;
-        return Pieces(default).Sum((first, last) =>
+        var (uniform, sum) = (1.0 / StateCount, 0.0);
+        for (var at = first; at < last;)
         {
-            var sum = 0.0;
-            for (var state = first; state < last; state++)
+            var (end, stationary) = Run(at, last);
+            for (; at < end; at++)
             {
-                sum += Math.Abs(Limit(state, turns) - uniform);
+                sum += Math.Abs((Period == 1 ? stationary : _cycle.Classes[at] == turns ? Period * stationary : 0) - uniform);
             }
+        }
 
-            return (sum, 0, 0);
-        }).A / 2;
+        return (sum, 0, 0);
+    }).A / 2;
+
+    // The states from one on that have its shape, and the stationary probability of each.
+    private (int End, double Stationary) Run(int at, int last)
+    {
+        var place = at / _space.OfShape;
+        return ((int)Math.Min(last, (place + 1L) * _space.OfShape), _space.Rates.Stationary[place] / _space.OfShape);
     }
-
-    // What the probability of a state tends to along numbers of turns alike modulo the period.
-    private double Limit(int state, int turns) =>
-        Period == 1 || _cycle.ClassOf(state) == turns % Period ? Period * _space.Rates.Stationary[state / _space.OfShape] / _space.OfShape : 0;
 }

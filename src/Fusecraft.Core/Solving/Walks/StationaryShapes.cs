@@ -14,12 +14,14 @@ internal static class StationaryShapes
     private const double Fine = 1e-15;
     private const double Exact = 4e-14;
 
-    public static double[] Of(WalkRates rates)
+    /// <param name="rates">The walk.</param>
+    /// <param name="mostEliminated">The most shapes for which the distribution is found by elimination.</param>
+    public static double[] Of(WalkRates rates, int mostEliminated = MostEliminated)
     {
         var uniform = Normal([.. Enumerable.Repeat(1.0, rates.PlaceCount)]);
         var byFreeWeight = Normal(rates.FreeWeights);
         return IsStationary(rates, uniform) ? uniform : IsStationary(rates, byFreeWeight) ? byFreeWeight
-            : rates.PlaceCount <= MostEliminated ? Eliminate(rates) : Iterate(rates, uniform);
+            : rates.PlaceCount <= mostEliminated ? Eliminate(rates) : Iterate(rates, uniform);
     }
 
     /// <summary>How much one turn changes a distribution: the sum of all differences.</summary>

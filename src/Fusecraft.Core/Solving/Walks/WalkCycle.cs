@@ -3,18 +3,16 @@ namespace Fusecraft.Solving;
 /// <summary>The period of a random walk: the greatest common divisor of the lengths of all its ways from a state back to it; and for each state the rest of the lengths of the ways there from the base state.</summary>
 internal sealed class WalkCycle
 {
-    private readonly int[]? _levels;
-
-    private WalkCycle(int period, int[]? levels)
+    private WalkCycle(int period, int[] classes)
     {
         Period = period;
-        _levels = levels;
+        Classes = classes;
     }
 
     public int Period { get; }
 
-    /// <summary>The rest, modulo the period, of the number of turns after which a state can be reached.</summary>
-    public int ClassOf(int state) => _levels is null ? 0 : (Period - (_levels[state] % Period)) % Period;
+    /// <summary>For each state the rest, modulo the period, of the number of turns after which it can be reached; empty where the period is 1.</summary>
+    public int[] Classes { get; }
 
     /// <summary>Goes back from the base state breadth-first. Null where not all states lead there.</summary>
     public static WalkCycle? Of(WalkSpace space, CancellationToken cancellation)
@@ -53,7 +51,17 @@ internal sealed class WalkCycle
             }
         }
 
-        return count < space.Count ? null : new WalkCycle(Math.Max(1, period), period > 1 ? levels : null);
+        if (count < space.Count)
+        {
+            return null;
+        }
+
+        for (var state = 0; state < levels.Length && period > 1; state++)
+        {
+            levels[state] = (period - (levels[state] % period)) % period;
+        }
+
+        return new WalkCycle(Math.Max(1, period), period > 1 ? levels : []);
     }
 
     private static int Gcd(int a, int b)

@@ -24,8 +24,8 @@ public sealed class WalkDistances
     public ImmutableArray<WalkDistance> ByTurns { get; }
 
     /// <summary>
-    /// By how much rounding can have changed any of the distances. All terms are positive, so each turn adds at most a relative error of one unit in the last place (2^-53) for each term of a sum and each rounding of a
-    /// probability; the sums over the states are made of parts of at most some thousand terms. Holds for the distances from a stationary distribution where <see cref="RandomWalk.IsReversible"/> or
+    /// By how much rounding can have changed any of the distances. All terms are positive, so a turn adds at most one unit in the last place (2^-53) for each term of a sum and each rounding of a probability; the sums over
+    /// the states are made of parts of at most some thousand terms. Holds for the distances from a stationary distribution where <see cref="RandomWalk.IsReversible"/> or
     /// <see cref="RandomWalk.IsUniform"/>; else add half of <see cref="RandomWalk.StationaryResidual"/> as a hint, which is no bound.
     /// </summary>
     public double ErrorBound => _errorOfSums + ((ByTurns.Length - 1) * _errorOfTurn);

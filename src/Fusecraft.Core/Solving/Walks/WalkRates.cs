@@ -73,8 +73,8 @@ internal sealed class WalkRates
     /// <summary>True when steps and their reverses are equally likely in the stationary distribution.</summary>
     public bool IsReversible { get; }
 
-    /// <summary>Roundings of a probability and of the sum it goes into, in units in the last place.</summary>
-    public int RoundingsOfTurn => Width + _stepCount + 8;
+    /// <summary>Roundings of a probability, of that of staying, and of the sum they go into, in units in the last place.</summary>
+    public int RoundingsOfTurn => Width + (3 * _stepCount) + 8;
 
     /// <summary>For each shape the weight of all that can be done there.</summary>
     public double[] FreeWeights { get; private set; } = [];

@@ -48,7 +48,7 @@ public sealed class WalkSpectrum
 
     /// <summary>
     /// How far a value given can be from an eigenvalue. For extreme ones of a reversible walk this is the residual of their vectors, a proven bound; that no larger eigenvalue hides rests on a start vector drawn with a
-    /// fixed seed, and can only make the true gap smaller than the one given. For complete spectra it is what dense methods usually reach, and proven where the walk is reversible.
+    /// fixed seed, and can only make the true gap smaller than the one given. For complete spectra it is a cautious estimate of what dense methods reach.
     /// </summary>
     public double ErrorBound { get; }
 
