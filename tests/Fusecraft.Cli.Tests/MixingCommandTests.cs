@@ -26,7 +26,7 @@ public sealed class MixingCommandTests : IDisposable
     public async Task The_answer_for_programs_holds_every_turn()
     {
         var board = _bench.Write("board.fuse.json", Files.Board);
-        var outcome = await _bench.RunAsync("mixing", board, "--all-steps", "--turns", "300", "--json");
+        var outcome = await _bench.RunAsync("mixing", board, "--all-steps", "--turns", "2000", "--json");
 
         using var json = JsonDocument.Parse(outcome.Output);
         var root = json.RootElement;
@@ -35,7 +35,7 @@ public sealed class MixingCommandTests : IDisposable
         Assert.Equal(360, root.GetProperty("states").GetInt32());
         Assert.Equal(1, root.GetProperty("period").GetInt32());
         Assert.True(root.GetProperty("isUniform").GetBoolean());
-        Assert.Equal(301, root.GetProperty("distances").GetArrayLength());
+        Assert.Equal(2001, root.GetProperty("distances").GetArrayLength());
         var turns = root.GetProperty("turnsTo").GetProperty("1/4").GetInt32();
         Assert.True(root.GetProperty("distances")[turns].GetProperty("fromUniform").GetDouble() <= 0.25);
         Assert.True(root.GetProperty("distances")[turns - 1].GetProperty("fromUniform").GetDouble() > 0.25);
