@@ -55,7 +55,7 @@ internal static class MixingText
     private static string Drawn(RandomWalk walk) => walk.Period == 2 ? "one turn more by toss" : $"up to {walk.Period - 1} turns more by lot";
 
     // 1, 2, 5, 10, 20, 50, …, the numbers that the answers name, and the last.
-    private static IEnumerable<int> Shown(WalkDistances distances)
+    private static SortedSet<int> Shown(WalkDistances distances)
     {
         var last = distances.ByTurns.Length - 1;
         var shown = new SortedSet<int> { 0, last };
