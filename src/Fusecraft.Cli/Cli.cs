@@ -65,6 +65,7 @@ internal static class Cli
         root.Add(DepthsCommand.Create(terminal));
         root.Add(ScrambleCommand.Create(terminal));
         root.Add(LoopsCommand.Create(terminal));
+        root.Add(MixingCommand.Create(terminal));
         Help.Install(root);
         var version = root.Options.OfType<VersionOption>().Single();
         version.Description = "Shows the version.";

@@ -40,6 +40,7 @@ public sealed partial class CommandLineTests : IDisposable
     [InlineData("route")]
     [InlineData("solve")]
     [InlineData("trace")]
+    [InlineData("mixing")]
     public async Task Every_command_has_help_with_an_example(string command)
     {
         var outcome = await _bench.RunAsync(command, "--help");
@@ -55,7 +56,7 @@ public sealed partial class CommandLineTests : IDisposable
     {
         var outcome = await _bench.RunAsync("--help");
 
-        Assert.Equal(["new", "schema", "check", "examine", "compare", "route", "solve", "trace", "depths", "scramble", "loops"], ListedCommand().Matches(outcome.Output).Select(match => match.Groups[1].Value));
+        Assert.Equal(["new", "schema", "check", "examine", "compare", "route", "solve", "trace", "depths", "scramble", "loops", "mixing"], ListedCommand().Matches(outcome.Output).Select(match => match.Groups[1].Value));
         Assert.Equal(ExitCodes.Done, outcome.Code);
     }
 

@@ -97,6 +97,10 @@ internal sealed class RowTable
         return (int)(entry >> 5) + _places[((entry & 31) * (uint)WordStates) + (uint)place];
     }
 
+    /// <summary>Where the places of a word go, by its entry in a map of words.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public ReadOnlySpan<byte> Places(uint entry) => _places.AsSpan((int)(entry & 31) * WordStates, WordStates);
+
     private void FillGather()
     {
         for (var permutation = 0; permutation < _places.Length / WordStates; permutation++)
