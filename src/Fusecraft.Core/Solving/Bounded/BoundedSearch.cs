@@ -148,7 +148,7 @@ public sealed class BoundedSearch
             progress?.Report(new SolveProgress("searching from both ends", 0));
             var meeting = new MeetingSearch(Mechanism, Options.Metric, cancellation);
             var (outcome, word) = meeting.Run(from, labels, goal, maxLength, (int)Math.Min(Options.MaxMeetingStates, Options.MaxNodes));
-            (nodes, least) = (meeting.StateCount, meeting.LowerBound);
+            (nodes, least) = (Math.Min(meeting.StateCount, Options.MaxNodes), meeting.LowerBound);
             if (outcome != BoundedOutcome.BudgetEnded || nodes >= Options.MaxNodes)
             {
                 return Result(outcome, word, least, nodes, from, labels, goal);
