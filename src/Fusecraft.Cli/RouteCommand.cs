@@ -4,7 +4,7 @@ using Fusecraft.Solving;
 
 namespace Fusecraft.Cli;
 
-/// <summary><c>fusecraft route FILE --from STATE --to STATE|goal [--shape-only] [--max-length N] [--metric step|run] [--nodes N] [--time S] [--json]</c></summary>
+/// <summary><c>fusecraft route FILE --from STATE --to STATE|goal [--shape-only] [--max-length N] [--metric M] [--weight TURN=N]… [--nodes N] [--time N] [--json]</c></summary>
 internal static class RouteCommand
 {
     private const string Goal = "goal";
@@ -15,11 +15,7 @@ internal static class RouteCommand
         var from = CommonOptions.Text("--from", "STATE", $"Where to start: {CommonOptions.StateForms}.");
         var to = CommonOptions.Text("--to", "STATE", "Where to get: a state as for --from, or \"goal\", the mechanism's own goal.");
         var shapeOnly = new Option<bool>("--shape-only") { Description = "Only the blocks and marks have to get there; labels may end anywhere." };
-        var maxLength = CommonOptions.Number("--max-length", 0, "Only words of at most N steps (or runs, with --metric run) count; searched until one is found or none is proven to exist.");
-        var metric = new Option<string>("--metric") { Description = "What counts as one: a \"step\" (as without this option), or a \"run\" of steps with one name or its opposite.", HelpName = "step|run" };
-        metric.AcceptOnlyFromAmong("step", "run");
-        var nodes = CommonOptions.Number("--nodes", 1, "The bounded search ends after N nodes.");
-        var time = CommonOptions.Number("--time", 1, "The bounded search ends after N seconds, and says how many nodes give the same answer without a clock.");
+        var search = new SearchOptions();
         var json = CommonOptions.Json("Prints the answer as one JSON object.");
         var command = new ExampleCommand(
             "route",
@@ -27,8 +23,9 @@ internal static class RouteCommand
             "fusecraft route lock.fuse.json --from home --to \"A B\"",
             "fusecraft route lock.fuse.json --from \"(1 2 3)\" --to goal --max-length 12")
         {
-            file, from, to, shapeOnly, maxLength, metric, nodes, time, json,
+            file, from, to, shapeOnly, json,
         };
+        search.AddTo(command);
         command.SetAction((parsed, cancellation) =>
         {
             var path = parsed.GetRequiredValue(file);
@@ -36,13 +33,7 @@ internal static class RouteCommand
             var start = MechanismInput.State(mechanism, "--from", parsed.GetRequiredValue(from));
             var target = parsed.GetRequiredValue(to);
             var end = target.Trim() == Goal ? null : MechanismInput.State(mechanism, "--to", target);
-            var solver = new Solver(mechanism, new SolveOptions
-            {
-                MaxLength = parsed.GetValue(maxLength),
-                Metric = parsed.GetValue(metric) == "run" ? Metric.Run : Metric.Step,
-                MaxNodes = parsed.GetValue(nodes) ?? SolveOptions.Default.MaxNodes,
-                TimeLimit = parsed.GetValue(time) is { } seconds ? TimeSpan.FromSeconds(seconds) : null,
-            });
+            var solver = new Solver(mechanism, search.Read(parsed, mechanism));
             if (parsed.GetValue(shapeOnly))
             {
                 end ??= GoalShape(mechanism);

@@ -3,7 +3,7 @@ using Fusecraft.Solving;
 
 namespace Fusecraft.Cli;
 
-/// <summary><c>fusecraft solve FILE --from STATE | --colours COLOURS [--max-length N] [--json]</c></summary>
+/// <summary><c>fusecraft solve FILE --from STATE | --colours COLOURS [--max-length N] [--metric M] [--weight TURN=N]… [--nodes N] [--time N] [--json]</c></summary>
 internal static class SolveCommand
 {
     public static Command Create(Terminal terminal)
@@ -13,7 +13,7 @@ internal static class SolveCommand
         from.Required = false;
         var colours = CommonOptions.Text("--colours", "COLOURS", "Where to start, by what is seen: \"home\", the sites that differ from home as SITE=COLOUR, or the colours of all sites in order.");
         colours.Required = false;
-        var maxLength = CommonOptions.Number("--max-length", 0, "Only words of at most N steps count.");
+        var search = new SearchOptions();
         var json = CommonOptions.Json("Prints the answer as one JSON object.");
         var command = new ExampleCommand(
             "solve",
@@ -21,8 +21,9 @@ internal static class SolveCommand
             "fusecraft solve lock.fuse.json --from \"A B A'\"",
             "fusecraft solve cube.fuse.json --colours \"UF:U=F UF:F=U UB:U=B UB:B=U\"")
         {
-            file, from, colours, maxLength, json,
+            file, from, colours, json,
         };
+        search.AddTo(command);
         command.Validators.Add(result =>
         {
             if ((result.GetResult(from) is null) == (result.GetResult(colours) is null))
@@ -34,7 +35,7 @@ internal static class SolveCommand
         {
             var path = parsed.GetRequiredValue(file);
             var mechanism = MechanismInput.Load(path);
-            var solver = new Solver(mechanism, new SolveOptions { MaxLength = parsed.GetValue(maxLength) });
+            var solver = new Solver(mechanism, search.Read(parsed, mechanism));
             if (parsed.GetValue(colours) is { } seen)
             {
                 var shown = MechanismInput.Colours(mechanism, "--colours", seen);

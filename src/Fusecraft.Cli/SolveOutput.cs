@@ -31,8 +31,14 @@ internal static class SolveOutput
         if (result.HasPath)
         {
             output.WriteLine(result.Path.Length == 0 ? "(no steps)" : result.Path.Word.ToString());
-            var runs = result.Metric.Kind == MetricKind.Run ? $"{Wording.Count((int)result.Metric.LengthOf(result.Path), "run")}, " : "";
-            output.WriteLine($"{runs}{Wording.Count(result.Path.Length, "step")}{(result.IsProvenShortest ? ", proven shortest" : ", perhaps not the shortest")}. {result.Reason}");
+            var length = result.Metric.LengthOf(result.Path);
+            var measured = result.Metric.Kind switch
+            {
+                MetricKind.Run => $"{Wording.Count((int)length, "run")}, ",
+                MetricKind.Weights => $"weight {Wording.Number(length)}, ",
+                _ => "",
+            };
+            output.WriteLine($"{measured}{Wording.Count(result.Path.Length, "step")}{(result.IsProvenShortest ? ", proven shortest" : ", perhaps not the shortest")}. {result.Reason}");
         }
         else
         {

@@ -119,6 +119,15 @@ public sealed class RouteAndSolveCommandTests : IDisposable
     }
 
     [Fact]
+    public async Task Solve_counts_as_it_is_told()
+    {
+        Assert.StartsWith("R U L\n3 runs, 3 steps, proven shortest.", (await _bench.RunAsync("solve", _board, "--from", "R D L", "--metric", "run", "--max-length", "3", "--nodes", "9000")).Output, StringComparison.Ordinal);
+        Assert.Equal(ExitCodes.Negative, (await _bench.RunAsync("solve", _board, "--from", "R D L", "--metric", "run", "--max-length", "2")).Code);
+        Assert.Equal(ExitCodes.BadInput, (await _bench.RunAsync("solve", _board, "--from", "R D L", "--metric", "weights", "--weight", "no=2")).Code);
+        Assert.Equal(ExitCodes.Usage, (await _bench.RunAsync("solve", _board, "--from", "R D L", "--nodes", "0")).Code);
+    }
+
+    [Fact]
     public async Task Shapes_alone_are_reached_sooner()
     {
         var states = await _bench.RunAsync("route", _board, "--from", "home", "--to", "R D L U R", "--max-length", "1");

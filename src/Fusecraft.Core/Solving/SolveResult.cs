@@ -15,7 +15,7 @@ public sealed class SolveResult
         Reason = reason;
     }
 
-    /// <summary>True: there is a path as asked for. False: proven that there is none. Null: a budget ended before either was settled.</summary>
+    /// <summary>True: there is a path as asked for. False: proven that there is none, or none within the greatest length asked for. Null: a budget ended before either was settled.</summary>
     public bool? IsSolvable { get; }
 
     /// <summary>A path as asked for, replayed before it was given; null where there is none, or where a budget ended before one was found.</summary>
@@ -24,7 +24,7 @@ public sealed class SolveResult
     /// <summary>How the length of the path was counted.</summary>
     public Metric Metric { get; private init; } = Metric.Step;
 
-    /// <summary>True when it is proven that no path is shorter, by the metric.</summary>
+    /// <summary>True when it is proven that no path is shorter, by the metric. A path within the greatest length asked for answers the question without being the shortest.</summary>
     public bool IsProvenShortest { get; }
 
     /// <summary>In one sentence, how the answer was settled or what ended the work.</summary>
@@ -34,12 +34,10 @@ public sealed class SolveResult
     [MemberNotNullWhen(true, nameof(Path))]
     public bool HasPath => Path is not null;
 
-    internal static SolveResult Shortest(TurnPath path) => new(true, path, true, path.Length == 0 ? "Nothing needs to be done." : "A search over all shorter paths found none.");
-
     internal static SolveResult Shortest(TurnPath path, Metric metric) =>
         new(true, path, true, path.Length == 0 ? "Nothing needs to be done." : "A search over all shorter paths found none.") { Metric = metric };
 
-    internal static SolveResult Found(TurnPath path, string reason) => new(true, path, false, reason);
+    internal static SolveResult Found(TurnPath path, Metric metric, string reason) => new(true, path, false, reason) { Metric = metric };
 
     internal static SolveResult Impossible(string reason) => new(false, null, false, reason);
 

@@ -14,7 +14,7 @@ public sealed partial class Solver
     /// <param name="progress">Told what the solver is doing.</param>
     /// <param name="cancellationToken">Ends the work early.</param>
     /// <remarks>
-    /// Searches from both ends over what matters of the labels, so what it finds within the budget is shortest, in steps. Where the budget ends that, the vertex group says whether there is such a loop at all, and one
+    /// Searches from both ends over what matters of the labels, so what it finds within the budget is of the fewest steps. Where the budget ends that, the vertex group says whether there is such a loop at all, and one
     /// of its members that does the exchange is made a path.
     /// </remarks>
     /// <exception cref="ArgumentException">State or exchange belong to another mechanism.</exception>
@@ -78,12 +78,12 @@ public sealed partial class Solver
         }
 
         return RouteStates(at, Mechanism.StateOf(at.Labels * member.Value), progress, cancellation) is { HasPath: true } found
-            ? SolveResult.Found(Replayed(at, found.Path.Steps, IsDone), $"Made for one of the members of the vertex group that do the exchange; {bound}.")
+            ? SolveResult.Found(Replayed(at, found.Path.Steps, IsDone), Options.Metric, $"Made for one of the members of the vertex group that do the exchange; {bound}.")
             : SolveResult.Unsettled($"The vertex group proves that there is such a loop; {bound}.", Options.MaxLength is null ? true : null);
 
-        SolveResult? Search(int maxStates) => search.Run(maxStates, Options.MaxLength) switch
+        SolveResult? Search(int maxStates) => search.Run(maxStates, MaxSteps) switch
         {
-            StateSearch.Outcome.Found => SolveResult.Shortest(Replayed(at, search.Path, IsDone)),
+            StateSearch.Outcome.Found => OfFewestSteps(Replayed(at, search.Path, IsDone)),
             StateSearch.Outcome.NoPath => SolveResult.Impossible("A search has seen every arrangement of these pieces that can be reached; the wanted one is not among them."),
             StateSearch.Outcome.NoneThatShort => TooShort(),
             _ => null,

@@ -32,7 +32,7 @@ public sealed partial class Solver
             if (Covers(groupoid.Store.Key(shape), mask))
             {
                 var path = groupoid.PathTo(shape);
-                return path.Length > Options.MaxLength ? TooShort() : SolveResult.Shortest(Replayed(from, path.Steps, end => Covers(end.Shape!.Key, mask)));
+                return path.Length > MaxSteps ? TooShort() : OfFewestSteps(Replayed(from, path.Steps, end => Covers(end.Shape!.Key, mask)));
             }
         }
 
@@ -67,10 +67,10 @@ public sealed partial class Solver
         var search = new StateSearch(Mechanism, cancellation);
         search.AddStart(from.Shape!, ColoursOn(from));
         search.AddGoal(Mechanism.Home, wanted);
-        switch (search.Run(Options.MaxStates, Options.MaxLength))
+        switch (search.Run(Options.MaxStates, MaxSteps))
         {
             case StateSearch.Outcome.Found:
-                return SolveResult.Shortest(Replayed(from, search.Path, end => end.Shape == Mechanism.Home && ColoursOn(end).AsSpan().SequenceEqual(wanted)));
+                return OfFewestSteps(Replayed(from, search.Path, end => end.Shape == Mechanism.Home && ColoursOn(end).AsSpan().SequenceEqual(wanted)));
             case StateSearch.Outcome.NoPath:
                 return SolveResult.Impossible("A search has seen every colouring that can be reached; the home colouring is not among them.");
             case StateSearch.Outcome.NoneThatShort:
@@ -80,7 +80,7 @@ public sealed partial class Solver
         // Every label home is one way to have every colour home.
         var labelled = RouteStates(from, Mechanism.HomeState, progress, cancellation);
         return labelled.HasPath
-            ? SolveResult.Found(labelled.Path, $"Brings every label home, so every colour; a search proved that no path has fewer than {search.LowerBound} steps before its budget ended.")
+            ? SolveResult.Found(labelled.Path, Options.Metric, $"Brings every label home, so every colour; a search proved that no path has fewer than {search.LowerBound} steps before its budget ended.")
             : SolveResult.Unsettled($"The budget of {Options.MaxStates} states ended the search, and the labels themselves cannot all be brought home or no path for that was found.");
     }
 
@@ -111,10 +111,10 @@ public sealed partial class Solver
                 search.AddGoal(groupoid.ShapeAt(shape), Tracked(Mechanism.HomeState));
             }
 
-            switch (search.Run(Options.MaxStates, Options.MaxLength))
+            switch (search.Run(Options.MaxStates, MaxSteps))
             {
                 case StateSearch.Outcome.Found:
-                    return SolveResult.Shortest(Replayed(from, search.Path, IsGoal));
+                    return OfFewestSteps(Replayed(from, search.Path, IsGoal));
                 case StateSearch.Outcome.NoPath:
                     return SolveResult.Impossible("A search has seen every arrangement of the wanted labels that can be reached; having them all home is not among them.");
                 case StateSearch.Outcome.NoneThatShort:
@@ -147,7 +147,7 @@ public sealed partial class Solver
             if (chain.MemberTaking(places, [.. sites.Select(site => back[site])]) is { } loop)
             {
                 return RouteStates(from, Mechanism.StateOf(from.Labels * loop * path), progress, cancellation) is { HasPath: true } found
-                    ? SolveResult.Found(found.Path, found.Reason)
+                    ? SolveResult.Found(found.Path, Options.Metric, "The vertex group gave one of the states where all wanted labels are home; a path leads there.")
                     : SolveResult.Unsettled("The vertex group proves that a path exists, but none was found within the budget.", Options.MaxLength is null ? true : null);
             }
         }

@@ -12,7 +12,7 @@ public sealed partial class Solver
     {
         if (from == to)
         {
-            return SolveResult.Shortest(from.Shape is null ? TurnPath.At(Mechanism.Home) : TurnPath.At(from.Shape));
+            return SolveResult.Shortest(TurnPath.At(from.Shape ?? Mechanism.Home), Options.Metric);
         }
 
         if (IsOffBoard(from, "starts", out var reason) || IsOffBoard(to, "ends", out reason))
@@ -91,7 +91,7 @@ public sealed partial class Solver
 
         SolveResult? Search(int maxStates) => search.Run(maxStates, Options.MaxLength) switch
         {
-            StateSearch.Outcome.Found => SolveResult.Shortest(Replayed(from, search.Path, end => end == to)),
+            StateSearch.Outcome.Found => SolveResult.Shortest(Replayed(from, search.Path, end => end == to), Metric.Step),
             StateSearch.Outcome.NoPath => SolveResult.Impossible(
                 Prove(from, to, cancellation).Impossible ?? "A search has seen every state that can be reached; the wanted one is not among them."),
             StateSearch.Outcome.NoneThatShort => TooShort(),
@@ -199,6 +199,7 @@ public sealed partial class Solver
 
         return SolveResult.Found(
             Replayed(from, word.Steps, end => end == to),
+            Options.Metric,
             $"{word.How}. {(unsettled.Length > 0 ? unsettled : $"A search proved that no path has fewer than {lowerBound} steps before its budget ended.")}");
     }
 

@@ -69,7 +69,7 @@ public sealed partial class Solver
         RequireOwn(from);
         lock (_lock)
         {
-            return Mechanism.Goal.Kind switch
+            return ByGoalDistances(from, progress, cancellationToken) ?? Mechanism.Goal.Kind switch
             {
                 GoalKind.Shape => RouteShapes(from, Mechanism.Home, cancellationToken),
                 GoalKind.Marks => RouteMarks(from, progress, cancellationToken),
@@ -97,7 +97,7 @@ public sealed partial class Solver
         }
     }
 
-    /// <summary>A shortest turn path from the shape of one state to the shape of another, labels ignored.</summary>
+    /// <summary>A turn path of the fewest steps from the shape of one state to the shape of another, labels ignored. By another metric than steps it is measured, but not proven shortest.</summary>
     /// <inheritdoc cref="Route"/>
     public SolveResult RouteShapes(State from, State to, IProgress<SolveProgress>? progress = null, CancellationToken cancellationToken = default)
     {
@@ -123,16 +123,14 @@ public sealed partial class Solver
         var search = new StateSearch(Mechanism, cancellation);
         search.AddStart(from.Shape!, colours);
         search.AddGoal(to, colours);
-        return search.Run(Options.MaxShapes, Options.MaxLength) switch
+        return search.Run(Options.MaxShapes, MaxSteps) switch
         {
-            StateSearch.Outcome.Found => SolveResult.Shortest(TurnPath.Follow(from.Shape!, search.Path)),
+            StateSearch.Outcome.Found => OfFewestSteps(TurnPath.Follow(from.Shape!, search.Path)),
             StateSearch.Outcome.NoPath => SolveResult.Impossible($"No turn path leads from the shape {from.Shape} to the shape {to}."),
             StateSearch.Outcome.NoneThatShort => TooShort(),
             _ => SolveResult.Unsettled($"The budget of {Options.MaxShapes} shapes ended the search; no path is shorter than {search.LowerBound} steps."),
         };
     }
-
-    private SolveResult TooShort() => SolveResult.Impossible($"A search over all paths of at most {Options.MaxLength} {(Options.Metric.Kind == MetricKind.Step ? "steps" : Options.Metric.Kind == MetricKind.Run ? "runs" : "by weights")} found none.");
 
     private static bool IsOffBoard(State state, string what, [NotNullWhen(true)] out string? reason)
     {

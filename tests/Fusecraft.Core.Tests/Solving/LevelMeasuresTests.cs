@@ -100,7 +100,7 @@ public class LevelMeasuresTests
         Assert.Throws<ArgumentException>(() => LevelMeasures.FromTable(board.HomeState, fromBase));
     }
 
-    private static Mechanism WithGoal(MechanismDefinition plain, SeededRandom random)
+    internal static Mechanism WithGoal(MechanismDefinition plain, SeededRandom random)
     {
         var marks = plain.Marks.Select(mark => $"{mark.Name}@{plain.Sites[random.NextInt32(plain.Sites.Length)]}").ToList();
         var goal = random.NextInt32(5) switch
@@ -124,7 +124,7 @@ public class LevelMeasuresTests
         });
     }
 
-    private static bool IsGoal(State state)
+    internal static bool IsGoal(State state)
     {
         var mechanism = state.Mechanism;
         return mechanism.Goal.Kind switch

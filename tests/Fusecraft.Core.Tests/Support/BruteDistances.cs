@@ -6,12 +6,12 @@ namespace Fusecraft.Tests.Support;
 /// <summary>Distances between states by plain search, without a group or a numbering. In the run metric a node is a state with the name that a run may go on with.</summary>
 internal static class BruteDistances
 {
-    /// <summary>All states that can be reached from one.</summary>
-    public static List<State> Reachable(State from)
+    /// <summary>All states that can be reached from one; not more than about so many.</summary>
+    public static List<State> Reachable(State from, int most = int.MaxValue)
     {
         var seen = new HashSet<State> { from };
         var states = new List<State> { from };
-        for (var i = 0; i < states.Count; i++)
+        for (var i = 0; i < states.Count && states.Count <= most; i++)
         {
             foreach (var step in from.Mechanism.Steps)
             {
