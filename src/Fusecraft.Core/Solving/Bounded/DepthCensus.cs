@@ -34,6 +34,12 @@ public sealed class DepthCensus
     /// <summary>True exactly where every state that can be reached is counted; false where some lie beyond the greatest distance, or beyond the budget.</summary>
     public bool IsWhole { get; }
 
+    /// <summary>The number of all states that can be reached; null where <see cref="IsWhole"/> is false.</summary>
+    public BigInteger? StateCount => IsWhole ? Sum(static _ => 1) : null;
+
+    /// <summary>The mean distance of all states that can be reached; not a number where <see cref="IsWhole"/> is false.</summary>
+    public double Mean => IsWhole ? (double)Sum(index => index * Unit) / (double)Sum(static _ => 1) : double.NaN;
+
     /// <summary>Counts states by their distance from one.</summary>
     /// <param name="from">A state with a shape.</param>
     /// <param name="greatest">The greatest distance that is counted, by the metric.</param>
@@ -64,6 +70,8 @@ public sealed class DepthCensus
         var isCut = !(space.IsUniform ? run.ByLevels(from.Shape) : run.ByWeights(from.Shape));
         return new DepthCensus(metric, moves.Unit, run.Counts, isCut, run.IsWhole);
     }
+
+    private BigInteger Sum(Func<int, int> factor) => Counts.Select((count, index) => count * factor(index)).Aggregate(BigInteger.Zero, (sum, part) => sum + part);
 
     // A list of moves for each shape is the fastest where shapes are few; where they are many, each state finds its own.
     private static CensusSpace SpaceOf(Shape shape, Metric metric, PruningMoves moves, int maxStates, CancellationToken cancellation)
