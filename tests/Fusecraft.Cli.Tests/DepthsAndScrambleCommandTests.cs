@@ -32,6 +32,7 @@ public sealed class DepthsAndScrambleCommandTests : IDisposable
         using var json = JsonDocument.Parse(outcome.Output);
         Assert.Equal("fusecraft/depths/1", json.RootElement.GetProperty("format").GetString());
         Assert.Equal("step", json.RootElement.GetProperty("metric").GetString());
+        Assert.True(json.RootElement.GetProperty("isComplete").GetBoolean());
         Assert.Equal("181440", json.RootElement.GetProperty("states").GetString());
         Assert.Equal(32, json.RootElement.GetProperty("counts").GetArrayLength());
         Assert.Equal("221", json.RootElement.GetProperty("counts")[30].GetString());
@@ -63,15 +64,35 @@ public sealed class DepthsAndScrambleCommandTests : IDisposable
         Assert.StartsWith("--save: ", refused.Error, StringComparison.Ordinal);
     }
 
+    // OEIS A079761: the last counts of the 2x2x2 by runs.
     [Fact]
-    public async Task Too_many_states_end_the_work_with_a_message()
+    public async Task Without_room_for_a_table_the_states_are_counted_one_by_one()
     {
         var outcome = await _bench.RunAsync("depths", _board, "--max-megabytes", "1", "--metric", "weights");
         Assert.Equal(ExitCodes.Done, outcome.Code);
         var cube = _bench.Write("cube.fuse.json", """{ "format": "fusecraft/mechanism/1", "name": "Cube", "family": { "kind": "cube", "size": 2 } }""");
-        outcome = await _bench.RunAsync("depths", cube, "--max-megabytes", "1");
-        Assert.Equal(ExitCodes.BudgetEnded, outcome.Code);
+        outcome = await _bench.RunAsync("depths", cube, "--max-megabytes", "1", "--metric", "run");
+        Assert.Equal(ExitCodes.Done, outcome.Code);
         Assert.Contains("A table of the 3674160 states of Cube takes about ", outcome.Error, StringComparison.Ordinal);
+        Assert.EndsWith("  10    623,800   16.978 %\n  11      2,644    0.072 %\n\n3,674,160 states can be reached from home.\nGreatest distance 11, mean 8.755576 runs.\n", outcome.Output, StringComparison.Ordinal);
+        outcome = await _bench.RunAsync("depths", cube, "--max-megabytes", "1", "--save", cube + ".table");
+        Assert.Equal((ExitCodes.BudgetEnded, ""), (outcome.Code, outcome.Output));
+    }
+
+    // OEIS A080601: the first counts of the 3x3x3.
+    [Fact]
+    public async Task A_budget_of_states_ends_the_count_and_is_named()
+    {
+        var cube = _bench.Write("cube.fuse.json", """{ "format": "fusecraft/mechanism/1", "name": "Cube", "family": { "kind": "cube", "size": 3 } }""");
+        var outcome = await _bench.RunAsync("depths", cube, "--metric", "run", "--max-states", "50000");
+        Assert.Equal(ExitCodes.BudgetEnded, outcome.Code);
+        Assert.Equal("runs  states\n   0       1\n   1      18\n   2     243\n   3   3,240\n   4  43,239\n\nHow many states can be reached from home is not known.\n", outcome.Output);
+        Assert.Contains("The budget of 50,000 states (--max-states) ended the count; how many states are at distance 5 or farther is not known.", outcome.Error, StringComparison.Ordinal);
+
+        outcome = await _bench.RunAsync("depths", cube, "--metric", "run", "--max-states", "50000", "--json");
+        Assert.Equal(ExitCodes.BudgetEnded, outcome.Code);
+        Assert.Equal(
+            """{"format":"fusecraft/depths/1","metric":"run","origin":"home","isComplete":false,"states":null,"counts":["1","18","243","3240","43239"],"greatest":null,"mean":null}""" + "\n", outcome.Output);
     }
 
     [Fact]

@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using System.Numerics;
 using Fusecraft.Mechanisms;
 
 namespace Fusecraft.Solving;
@@ -7,7 +8,9 @@ namespace Fusecraft.Solving;
 /// <remarks>Immutable, safe to share.</remarks>
 public sealed class DepthCensus
 {
-    private DepthCensus(Metric metric, int unit, List<long> counts, bool isCut, bool isWhole)
+    private const int FewShapes = 1 << 14;
+
+    private DepthCensus(Metric metric, int unit, List<BigInteger> counts, bool isCut, bool isWhole)
     {
         Metric = metric;
         Unit = unit;
@@ -23,19 +26,28 @@ public sealed class DepthCensus
     public int Unit { get; }
 
     /// <summary>Entry <c>d</c> is the number of states at distance <c>d</c> times <see cref="Unit"/>. Every entry is exact.</summary>
-    public ImmutableArray<long> Counts { get; }
+    public ImmutableArray<BigInteger> Counts { get; }
 
     /// <summary>True where the budget of states ended the census before the distance asked for; the distances it could not finish are left out.</summary>
     public bool IsCut { get; }
 
-    /// <summary>True where the census met no state that it did not count, so that all states are counted; false where some lie beyond, or where it did not look beyond the greatest distance.</summary>
+    /// <summary>True exactly where every state that can be reached is counted; false where some lie beyond the greatest distance, or beyond the budget.</summary>
     public bool IsWhole { get; }
+
+    /// <summary>The number of all states that can be reached; null where <see cref="IsWhole"/> is false.</summary>
+    public BigInteger? StateCount => IsWhole ? Sum(static _ => 1) : null;
+
+    /// <summary>The mean distance of all states that can be reached; not a number where <see cref="IsWhole"/> is false.</summary>
+    public double Mean => IsWhole ? (double)Sum(index => index * Unit) / (double)Sum(static _ => 1) : double.NaN;
 
     /// <summary>Counts states by their distance from one.</summary>
     /// <param name="from">A state with a shape.</param>
     /// <param name="greatest">The greatest distance that is counted, by the metric.</param>
     /// <param name="metric">How length is counted; null for steps. Weights may be 0.</param>
-    /// <param name="maxStates">The most states that are held; each takes the words of its packed form, 16 bytes on a 3x3x3, and 8 bytes, with weights 8 more.</param>
+    /// <param name="maxStates">
+    /// The most states that are held; each takes the words of its packed form, 16 bytes on a 3x3x3, and 8 to 16 bytes, with different weights 8 more. States that turns without weight lead between are held as one where each such turn
+    /// can be undone, however many they are; their shapes are held, and bounded, besides.
+    /// </param>
     /// <param name="cancellationToken">Ends the work early.</param>
     /// <exception cref="ArgumentException">The state has no shape, or the metric weighs turns that are not there.</exception>
     /// <exception cref="ArgumentOutOfRangeException">The distance is negative, or the budget below 1.</exception>
@@ -53,95 +65,125 @@ public sealed class DepthCensus
         metric ??= Metric.Step;
         metric.RequireTurnsOf(from.Mechanism, nameof(metric));
         var moves = new PruningMoves(from.Mechanism, metric);
-        var run = new Run(new StateNeighbours(from.Mechanism, metric), moves.Weights, greatest / moves.Unit, maxStates, cancellationToken);
-        var isCut = !(moves.IsUniform ? run.ByLevels(from.Shape) : run.ByWeights(from.Shape));
+        var space = SpaceOf(from.Shape, metric, moves, maxStates, cancellationToken);
+        var run = new Run(space, greatest / moves.Unit, maxStates, cancellationToken);
+        var isCut = !(space.IsUniform ? run.ByLevels(from.Shape) : run.ByWeights(from.Shape));
         return new DepthCensus(metric, moves.Unit, run.Counts, isCut, run.IsWhole);
     }
 
-    // Labels are counted from where they are, so the state at the start is that of its shape with none displaced.
-    private sealed class Run(StateNeighbours neighbours, int[] weights, int greatest, int maxStates, CancellationToken cancellation)
-    {
-        private readonly ShapeStore _store = new(neighbours.Words);
-        private readonly ulong[] _key = new ulong[neighbours.Words];
+    private BigInteger Sum(Func<int, int> factor) => Counts.Select((count, index) => count * factor(index)).Aggregate(BigInteger.Zero, (sum, part) => sum + part);
 
-        public List<long> Counts { get; } = [];
+    // A list of moves for each shape is the fastest where shapes are few; where they are many, each state finds its own.
+    private static CensusSpace SpaceOf(Shape shape, Metric metric, PruningMoves moves, int maxStates, CancellationToken cancellation)
+    {
+        var shapes = new ShapeStore(shape.Mechanism.Board.Words);
+        shapes.FindOrAdd<ManyWords>(shape.Key);
+        var key = new ulong[shape.Key.Length];
+        var next = new ulong[shape.Key.Length];
+        for (var i = 0; i < shapes.Count && shapes.Count <= FewShapes; i++)
+        {
+            shapes.Key(i).CopyTo(key);
+            foreach (var step in shape.Mechanism.Board.Moves)
+            {
+                if (step.IsFree(key))
+                {
+                    step.Move(key, next);
+                    shapes.FindOrAdd<ManyWords>(next);
+                }
+            }
+        }
+
+        return shapes.Count <= FewShapes
+            ? new CensusClasses(shape.Mechanism, metric, moves, shapes.Count == 1 ? 0 : BitOperations.Log2((uint)shapes.Count - 1) + 1, maxStates, cancellation)
+            : CensusClasses.Joins(shape.Mechanism, moves)
+            ? new CensusClasses(shape.Mechanism, metric, moves, 31, maxStates, cancellation)
+            : new CensusStates(shape.Mechanism, metric, moves);
+    }
+
+    // Labels are counted from where they are, so the state at the start is that of its shape with none displaced.
+    private sealed class Run(CensusSpace space, int greatest, int maxStates, CancellationToken cancellation)
+    {
+        private readonly ShapeStore _store = new(space.Words);
+        private readonly ulong[] _key = new ulong[space.Words];
+
+        public List<BigInteger> Counts { get; } = [];
 
         public bool IsWhole { get; private set; }
 
         public bool ByLevels(Shape shape)
         {
             Start(shape);
-            Counts.Add(1);
-            for (var (start, end) = (0, 1); Counts.Count <= greatest; (start, end) = (end, _store.Count))
+            for (var (first, end) = (0, 1); ; (first, end) = (end, _store.Count))
             {
-                for (var state = start; state < end; state++)
+                var count = BigInteger.Zero;
+                for (var node = first; node < end; node++)
                 {
-                    for (var group = 0; group < neighbours.GroupCount; group++)
+                    count += space.SizeOf(_store.Key(node));
+                }
+
+                Counts.Add(count);
+                if (Counts.Count > greatest)
+                {
+                    IsWhole = AreAllKnown(first, static _ => true);
+                    return true;
+                }
+
+                for (var node = first; node < end; node++)
+                {
+                    Expand(node);
+                    for (var i = 0; i < space.Count; i++)
                     {
-                        var found = neighbours.Find(_store.Key(state), group, isForward: true);
-                        for (var i = 1; i < found; i++)
-                        {
-                            _store.FindOrAdd<ManyWords>(neighbours[i]);
-                        }
+                        _store.FindOrAdd<ManyWords>(space[i]);
                     }
 
-                    if (IsOver(state))
+                    if (IsOver())
                     {
                         return false;
                     }
                 }
 
-                IsWhole = _store.Count == end;
-                if (IsWhole)
+                if (_store.Count == end)
                 {
+                    IsWhole = true;
                     return true;
                 }
-
-                Counts.Add(_store.Count - end);
             }
-
-            return true;
         }
 
-        // Dijkstra's algorithm with a list of states for each distance.
+        // Dijkstra's algorithm with a list of nodes for each of the distances that one move can lead to.
         public bool ByWeights(Shape shape)
         {
             Start(shape);
             var distances = new List<int> { 0 };
-            var waiting = Enumerable.Range(0, greatest + 1).Select(_ => new List<int>()).ToArray();
+            var waiting = Enumerable.Range(0, space.GreatestCost + 1).Select(_ => new List<int>()).ToArray();
             waiting[0].Add(0);
-            var next = new ulong[neighbours.Words];
-            IsWhole = true;
-            for (var distance = 0; distance <= greatest; distance++)
+            var isCutShort = false;
+            var waitingCount = 1L;
+            for (var distance = 0; waitingCount > 0; distance++)
             {
-                var count = 0L;
-                for (var i = 0; i < waiting[distance].Count; i++)
+                var count = BigInteger.Zero;
+                var here = waiting[distance % waiting.Length];
+                for (var at = 0; at < here.Count; at++)
                 {
-                    var state = waiting[distance][i];
-                    if (distances[state] != distance)
+                    var node = here[at];
+                    if (distances[node] != distance)
                     {
                         continue;
                     }
 
-                    count++;
-                    _store.Key(state).CopyTo(_key);
-                    for (var step = 0; step < weights.Length; step++)
+                    count += space.SizeOf(_store.Key(node));
+                    Expand(node);
+                    for (var i = 0; i < space.Count; i++)
                     {
-                        if (!neighbours.Keys.TryMove<ManyWords>(step, _key, next))
+                        if (space.CostOf(i) > greatest - distance)
                         {
+                            isCutShort = true;
                             continue;
                         }
 
-                        var there = distance + weights[step];
-                        if (there > greatest)
-                        {
-                            IsWhole &= _store.Find(next) >= 0;
-                            continue;
-                        }
-
-                        var known = _store.Count;
-                        var number = _store.FindOrAdd<ManyWords>(next);
-                        if (number == known)
+                        var there = distance + space.CostOf(i);
+                        var number = _store.FindOrAdd<ManyWords>(space[i]);
+                        if (number == distances.Count)
                         {
                             distances.Add(int.MaxValue);
                         }
@@ -149,19 +191,33 @@ public sealed class DepthCensus
                         if (there < distances[number])
                         {
                             distances[number] = there;
-                            waiting[there].Add(number);
+                            waiting[there % waiting.Length].Add(number);
+                            waitingCount++;
                         }
                     }
 
-                    if (IsOver(i))
+                    if (IsOver())
                     {
-                        IsWhole = false;
                         return false;
                     }
                 }
 
-                waiting[distance] = [];
+                waitingCount -= here.Count;
+                here.Clear();
                 Counts.Add(count);
+            }
+
+            IsWhole = !isCutShort || AreAllKnown(0, node => distances[node] > greatest - space.GreatestCost);
+            for (; IsWhole ? Counts[^1].IsZero : Counts.Count <= greatest; )
+            {
+                if (IsWhole)
+                {
+                    Counts.RemoveAt(Counts.Count - 1);
+                }
+                else
+                {
+                    Counts.Add(BigInteger.Zero);
+                }
             }
 
             return true;
@@ -169,18 +225,45 @@ public sealed class DepthCensus
 
         private void Start(Shape shape)
         {
-            neighbours.Keys.TryPack(shape.Key, default, _key);
+            space.Start(shape, _key);
             _store.FindOrAdd<ManyWords>(_key);
         }
 
-        private bool IsOver(int state)
+        // A store that grows moves its keys, so the key is copied.
+        private void Expand(int node)
         {
-            if (state % 1024 == 0)
+            if (node % 1024 == 0)
             {
                 cancellation.ThrowIfCancellationRequested();
             }
 
-            return _store.Count > maxStates;
+            _store.Key(node).CopyTo(_key);
+            space.Expand(_key);
         }
+
+        // The last nodes first, for these are likely to lead on.
+        private bool AreAllKnown(int first, Predicate<int> isNearTheEnd)
+        {
+            for (var node = _store.Count - 1; node >= first; node--)
+            {
+                if (!isNearTheEnd(node))
+                {
+                    continue;
+                }
+
+                Expand(node);
+                for (var i = 0; i < space.Count; i++)
+                {
+                    if (_store.Find(space[i]) < 0)
+                    {
+                        return false;
+                    }
+                }
+            }
+
+            return true;
+        }
+
+        private bool IsOver() => Math.Max(_store.Count, space.HeldShapes) > maxStates;
     }
 }
