@@ -139,6 +139,7 @@ internal sealed class CensusClasses : CensusSpace
     {
         var next = new ulong[Math.Max(1, _mechanism.Board.Words)];
         var key = new ulong[Words];
+        var known = new ShapeStore(Words);
         var waiting = new Stack<(int Shape, Permutation Done, Step Step)>([(shape, done, step)]);
         while (store.Count <= _maxShapes && waiting.TryPop(out var move))
         {
@@ -150,9 +151,10 @@ internal sealed class CensusClasses : CensusSpace
             var (target, path) = Place(next);
             var after = move.Done * move.Step.Permutation;
             Write(target, Sources(after * path.Inverse()), _straight, key);
-            var known = store.Count;
-            if (store.FindOrAdd<ManyWords>(key) == known && _runs.Length > 0)
+            store.FindOrAdd<ManyWords>(key);
+            if (_runs.Length > 0 && known.Find(key) < 0)
             {
+                known.FindOrAdd<ManyWords>(key);
                 var there = _shapes.Find(next);
                 foreach (var other in _mechanism.Steps)
                 {
