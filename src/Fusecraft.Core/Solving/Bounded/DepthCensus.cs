@@ -208,7 +208,7 @@ public sealed class DepthCensus
             }
 
             IsWhole = !isCutShort || AreAllKnown(0, node => distances[node] > greatest - space.GreatestCost);
-            for (; IsWhole ? Counts[^1].IsZero : Counts.Count <= greatest; )
+            for (; IsWhole ? Counts[^1].IsZero : Counts.Count <= greatest;)
             {
                 if (IsWhole)
                 {
