@@ -64,19 +64,26 @@ public sealed class DepthsAndScrambleCommandTests : IDisposable
         Assert.StartsWith("--save: ", refused.Error, StringComparison.Ordinal);
     }
 
-    // OEIS A079761: the last counts of the 2x2x2 by runs.
+    // The even permutations of ten things: 10!/2.
     [Fact]
     public async Task Without_room_for_a_table_the_states_are_counted_one_by_one()
     {
-        var outcome = await _bench.RunAsync("depths", _board, "--max-megabytes", "1", "--metric", "weights");
-        Assert.Equal(ExitCodes.Done, outcome.Code);
-        var cube = _bench.Write("cube.fuse.json", """{ "format": "fusecraft/mechanism/1", "name": "Cube", "family": { "kind": "cube", "size": 2 } }""");
-        outcome = await _bench.RunAsync("depths", cube, "--max-megabytes", "1", "--metric", "run");
-        Assert.Equal(ExitCodes.Done, outcome.Code);
-        Assert.Contains("A table of the 3674160 states of Cube takes about ", outcome.Error, StringComparison.Ordinal);
-        Assert.EndsWith("  10    623,800   16.978 %\n  11      2,644    0.072 %\n\n3,674,160 states can be reached from home.\nGreatest distance 11, mean 8.755576 runs.\n", outcome.Output, StringComparison.Ordinal);
-        outcome = await _bench.RunAsync("depths", cube, "--max-megabytes", "1", "--save", cube + ".table");
-        Assert.Equal((ExitCodes.BudgetEnded, ""), (outcome.Code, outcome.Output));
+        var ring = _bench.Write(
+            "ring.fuse.json",
+            """
+            { "format": "fusecraft/mechanism/1", "name": "Ring", "sites": ["a", "b", "c", "d", "e", "f", "g", "h", "i", "j"],
+              "turns": { "Short": { "moves": "(a b c)", "oneWay": true }, "Long": { "moves": "(b c d e f g h i j)", "oneWay": true } } }
+            """);
+        var table = await _bench.RunAsync("depths", ring, "--json");
+        var census = await _bench.RunAsync("depths", ring, "--json", "--max-megabytes", "1");
+        Assert.Equal((ExitCodes.Done, ExitCodes.Done), (table.Code, census.Code));
+        Assert.Contains("A table of the 1814400 states of Ring takes about ", census.Error, StringComparison.Ordinal);
+        Assert.Contains("\"isComplete\":true,\"states\":\"1814400\",\"counts\":[\"1\",\"2\",\"4\",", census.Output, StringComparison.Ordinal);
+        Assert.Equal(table.Output, census.Output);
+
+        var kept = await _bench.RunAsync("depths", ring, "--max-megabytes", "1", "--save", ring + ".table");
+        Assert.Equal((ExitCodes.BudgetEnded, ""), (kept.Code, kept.Output));
+        Assert.Equal(ExitCodes.BudgetEnded, (await _bench.RunAsync("depths", ring, "--max-megabytes", "1", "--to-goal")).Code);
     }
 
     // OEIS A080601: the first counts of the 3x3x3.
