@@ -45,7 +45,7 @@ public class DepthCensusTests
         Assert.Equal([1, 4, 9, 15, 20, 22, 20, 15, 9, 4, 1], DepthCensus.Take(adjacent.HomeState, 10).Counts.AsEnumerable());
     }
 
-    // Against trying everything.
+    // Against trying everything; once with a list of moves for each shape, once with each state finding its own.
     [Fact]
     public void Random_mechanisms_are_counted_as_by_hand() => RandomMechanisms.ForFixedSeeds(seed =>
     {
@@ -54,14 +54,17 @@ public class DepthCensusTests
         foreach (var metric in Solving.PruningTableTests.MetricsOf(mechanism, random))
         {
             var distances = NaiveDistances.From(mechanism.HomeState, metric);
-            var census = DepthCensus.Take(mechanism.HomeState, 4, metric);
-            Assert.Equal(distances.Values.Max() <= 4, census.IsWhole);
-            Assert.Equal(census.IsWhole ? distances.Count : null, census.StateCount);
-            Assert.False(census.IsCut);
-            Assert.Equal(Math.Min(4, distances.Values.Max()) / census.Unit, census.Counts.Length - 1);
-            for (var i = 0; i < census.Counts.Length; i++)
+            foreach (var fewShapes in (int[])[0, 1000])
             {
-                Assert.Equal(distances.Values.Count(distance => distance == i * census.Unit), census.Counts[i]);
+                var census = DepthCensus.Take(mechanism.HomeState, 4, metric, 1_000_000, fewShapes, default);
+                Assert.Equal(distances.Values.Max() <= 4, census.IsWhole);
+                Assert.Equal(census.IsWhole ? distances.Count : null, census.StateCount);
+                Assert.False(census.IsCut);
+                Assert.Equal(Math.Min(4, distances.Values.Max()) / census.Unit, census.Counts.Length - 1);
+                for (var i = 0; i < census.Counts.Length; i++)
+                {
+                    Assert.Equal(distances.Values.Count(distance => distance == i * census.Unit), census.Counts[i]);
+                }
             }
         }
     });

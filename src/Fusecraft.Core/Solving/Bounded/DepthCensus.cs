@@ -52,7 +52,16 @@ public sealed class DepthCensus
     /// <exception cref="ArgumentException">The state has no shape, or the metric weighs turns that are not there.</exception>
     /// <exception cref="ArgumentOutOfRangeException">The distance is negative, or the budget below 1.</exception>
     /// <exception cref="OperationCanceledException">The token asked for it.</exception>
-    public static DepthCensus Take(State from, int greatest, Metric? metric = null, int maxStates = 50_000_000, CancellationToken cancellationToken = default)
+    public static DepthCensus Take(State from, int greatest, Metric? metric = null, int maxStates = 50_000_000, CancellationToken cancellationToken = default) =>
+        Take(from, greatest, metric, maxStates, FewShapes, cancellationToken);
+
+    /// <param name="from">A state with a shape.</param>
+    /// <param name="greatest">The greatest distance.</param>
+    /// <param name="metric">How length is counted; null for steps.</param>
+    /// <param name="maxStates">The most states that are held.</param>
+    /// <param name="fewShapes">Up to so many shapes a list of moves is made for each.</param>
+    /// <param name="cancellationToken">Ends the work early.</param>
+    internal static DepthCensus Take(State from, int greatest, Metric? metric, int maxStates, int fewShapes, CancellationToken cancellationToken)
     {
         ArgumentNullException.ThrowIfNull(from);
         ArgumentOutOfRangeException.ThrowIfNegative(greatest);
@@ -65,7 +74,7 @@ public sealed class DepthCensus
         metric ??= Metric.Step;
         metric.RequireTurnsOf(from.Mechanism, nameof(metric));
         var moves = new PruningMoves(from.Mechanism, metric);
-        var space = SpaceOf(from.Shape, metric, moves, maxStates, cancellationToken);
+        var space = SpaceOf(from.Shape, metric, moves, maxStates, fewShapes, cancellationToken);
         var run = new Run(space, greatest / moves.Unit, maxStates, cancellationToken);
         var isCut = !(space.IsUniform ? run.ByLevels(from.Shape) : run.ByWeights(from.Shape));
         return new DepthCensus(metric, moves.Unit, run.Counts, isCut, run.IsWhole);
@@ -74,13 +83,13 @@ public sealed class DepthCensus
     private BigInteger Sum(Func<int, int> factor) => Counts.Select((count, index) => count * factor(index)).Aggregate(BigInteger.Zero, (sum, part) => sum + part);
 
     // A list of moves for each shape is the fastest where shapes are few; where they are many, each state finds its own.
-    private static CensusSpace SpaceOf(Shape shape, Metric metric, PruningMoves moves, int maxStates, CancellationToken cancellation)
+    private static CensusSpace SpaceOf(Shape shape, Metric metric, PruningMoves moves, int maxStates, int fewShapes, CancellationToken cancellation)
     {
         var shapes = new ShapeStore(shape.Mechanism.Board.Words);
         shapes.FindOrAdd<ManyWords>(shape.Key);
         var key = new ulong[shape.Key.Length];
         var next = new ulong[shape.Key.Length];
-        for (var i = 0; i < shapes.Count && shapes.Count <= FewShapes; i++)
+        for (var i = 0; i < shapes.Count && shapes.Count <= fewShapes; i++)
         {
             shapes.Key(i).CopyTo(key);
             foreach (var step in shape.Mechanism.Board.Moves)
@@ -93,11 +102,11 @@ public sealed class DepthCensus
             }
         }
 
-        return shapes.Count <= FewShapes
+        return shapes.Count <= fewShapes
             ? new CensusClasses(shape.Mechanism, metric, moves, shapes.Count == 1 ? 0 : BitOperations.Log2((uint)shapes.Count - 1) + 1, maxStates, cancellation)
             : CensusClasses.Joins(shape.Mechanism, moves)
-            ? new CensusClasses(shape.Mechanism, metric, moves, 31, maxStates, cancellation)
-            : new CensusStates(shape.Mechanism, metric, moves);
+                ? new CensusClasses(shape.Mechanism, metric, moves, 31, maxStates, cancellation)
+                : new CensusStates(shape.Mechanism, metric, moves);
     }
 
     // Labels are counted from where they are, so the state at the start is that of its shape with none displaced.
@@ -208,16 +217,15 @@ public sealed class DepthCensus
             }
 
             IsWhole = !isCutShort || AreAllKnown(0, node => distances[node] > greatest - space.GreatestCost);
-            for (; IsWhole ? Counts[^1].IsZero : Counts.Count <= greatest;)
+            while (IsWhole && Counts[^1].IsZero)
             {
-                if (IsWhole)
-                {
-                    Counts.RemoveAt(Counts.Count - 1);
-                }
-                else
-                {
-                    Counts.Add(BigInteger.Zero);
-                }
+                Counts.RemoveAt(Counts.Count - 1);
+            }
+
+            // Nothing lies between the last distance found and the greatest asked for.
+            while (!IsWhole && Counts.Count <= greatest)
+            {
+                Counts.Add(BigInteger.Zero);
             }
 
             return true;
