@@ -19,8 +19,7 @@ public sealed partial class Solver
         }
 
         progress?.Report(new SolveProgress("exploring shapes", 0));
-        var marks = Mechanism.Goal.Names.Select(name => (name[..name.IndexOf('@', StringComparison.Ordinal)], Mechanism.FindSite(name[(name.IndexOf('@', StringComparison.Ordinal) + 1)..])!.Value));
-        if (Mechanism.Board.MaskOf(marks) is not { } mask)
+        if (GoalStates.MarkMask(Mechanism) is not { } mask)
         {
             return SolveResult.Impossible($"A mark of the goal ({string.Join(", ", Mechanism.Goal.Names)}) can never be there.");
         }
@@ -29,29 +28,16 @@ public sealed partial class Solver
         var groupoid = ShapeGroupoid.ExploreFrom(from.Shape!, new ExplorationOptions { MaxShapes = Options.MaxShapes }, null, cancellation);
         for (var shape = 0; shape < groupoid.ShapeCount; shape++)
         {
-            if (Covers(groupoid.Store.Key(shape), mask))
+            if (GoalStates.Covers(groupoid.Store.Key(shape), mask))
             {
                 var path = groupoid.PathTo(shape);
-                return path.Length > MaxSteps ? TooShort() : OfFewestSteps(Replayed(from, path.Steps, end => Covers(end.Shape!.Key, mask)));
+                return path.Length > MaxSteps ? TooShort() : OfFewestSteps(Replayed(from, path.Steps, GoalStates.Contains));
             }
         }
 
         return groupoid.IsComplete
             ? SolveResult.Impossible($"None of the {groupoid.ShapeCount} shapes that can be reached has the marks of the goal.")
             : SolveResult.Unsettled($"The budget of {Options.MaxShapes} shapes ended the search.");
-    }
-
-    private static bool Covers(ReadOnlySpan<ulong> key, ulong[] mask)
-    {
-        for (var i = 0; i < mask.Length; i++)
-        {
-            if ((mask[i] & ~key[i]) != 0)
-            {
-                return false;
-            }
-        }
-
-        return true;
     }
 
     private SolveResult RouteColours(State from, IProgress<SolveProgress>? progress, CancellationToken cancellation)
@@ -70,7 +56,7 @@ public sealed partial class Solver
         switch (search.Run(Options.MaxStates, MaxSteps))
         {
             case StateSearch.Outcome.Found:
-                return OfFewestSteps(Replayed(from, search.Path, end => end.Shape == Mechanism.Home && ColoursOn(end).AsSpan().SequenceEqual(wanted)));
+                return OfFewestSteps(Replayed(from, search.Path, GoalStates.Contains));
             case StateSearch.Outcome.NoPath:
                 return SolveResult.Impossible("A search has seen every colouring that can be reached; the home colouring is not among them.");
             case StateSearch.Outcome.NoneThatShort:
@@ -92,7 +78,6 @@ public sealed partial class Solver
         }
 
         int[] sites = [.. Mechanism.Goal.Names.Select(name => Mechanism.FindSite(name)!.Value)];
-        bool IsGoal(State state) => Array.TrueForAll(sites, site => state.Labels[site] == site);
         progress?.Report(new SolveProgress("exploring shapes", 0));
         var groupoid = ShapeGroupoid.ExploreFrom(from.Shape!, new ExplorationOptions { MaxShapes = Options.MaxShapes }, null, cancellation);
         if (!groupoid.IsComplete)
@@ -114,7 +99,7 @@ public sealed partial class Solver
             switch (search.Run(Options.MaxStates, MaxSteps))
             {
                 case StateSearch.Outcome.Found:
-                    return OfFewestSteps(Replayed(from, search.Path, IsGoal));
+                    return OfFewestSteps(Replayed(from, search.Path, GoalStates.Contains));
                 case StateSearch.Outcome.NoPath:
                     return SolveResult.Impossible("A search has seen every arrangement of the wanted labels that can be reached; having them all home is not among them.");
                 case StateSearch.Outcome.NoneThatShort:

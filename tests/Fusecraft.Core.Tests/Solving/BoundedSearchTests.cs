@@ -199,7 +199,7 @@ public class BoundedSearchTests
     private static void CheckDistances(ulong seed, int maxMeetingStates, ref int settled, ref int ended)
     {
         var mechanism = Mechanism.Create(RandomMechanisms.From(seed));
-        var states = NaiveDistances.States(mechanism);
+        var states = BruteDistances.Reachable(mechanism.HomeState);
         var random = new SeededRandom(seed + 77);
         foreach (var metric in PruningTableTests.MetricsOf(mechanism, random))
         {

@@ -92,7 +92,7 @@ public class CosetCoordinatesTests
         var mechanism = Mechanism.Create(RandomMechanisms.From(seed));
         var random = new SeededRandom(seed);
         int[] colours = [.. Enumerable.Range(0, mechanism.SiteCount).Select(_ => random.NextInt32(3))];
-        var states = States(mechanism);
+        var states = BruteDistances.Reachable(mechanism.HomeState);
 
         // A base other than home now and then: the labels are then counted from a state with that shape.
         var origin = states[random.NextInt32(states.Count)];
@@ -152,24 +152,6 @@ public class CosetCoordinatesTests
 
             return reached;
         }
-    }
-
-    private static List<State> States(Mechanism mechanism)
-    {
-        var states = new List<State> { mechanism.HomeState };
-        var seen = new HashSet<State>(states);
-        for (var i = 0; i < states.Count; i++)
-        {
-            foreach (var step in mechanism.Steps)
-            {
-                if (states[i].TryStep(step, out var next) && seen.Add(next))
-                {
-                    states.Add(next);
-                }
-            }
-        }
-
-        return states;
     }
 
     private static int[] UpAndDownAgainstSides(Mechanism mechanism) => [.. mechanism.SiteNames.Select(name => name[^1] is 'U' or 'D' ? 1 : 0)];

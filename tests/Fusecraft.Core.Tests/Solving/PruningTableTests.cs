@@ -15,7 +15,7 @@ public class PruningTableTests
     public void No_bound_exceeds_a_distance_and_with_all_labels_apart_it_is_the_distance() => RandomMechanisms.ForFixedSeeds(seed =>
     {
         var mechanism = Mechanism.Create(RandomMechanisms.From(seed));
-        var states = NaiveDistances.States(mechanism);
+        var states = BruteDistances.Reachable(mechanism.HomeState);
         var random = new SeededRandom(seed);
         foreach (var metric in MetricsOf(mechanism, random))
         {

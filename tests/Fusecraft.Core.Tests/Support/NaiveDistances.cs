@@ -38,23 +38,4 @@ internal static class NaiveDistances
 
         return distances;
     }
-
-    /// <summary>All states that can be reached, in the order of a breadth-first search.</summary>
-    public static List<State> States(Mechanism mechanism)
-    {
-        var states = new List<State> { mechanism.HomeState };
-        var seen = new HashSet<State>(states);
-        for (var i = 0; i < states.Count; i++)
-        {
-            foreach (var step in mechanism.Steps)
-            {
-                if (states[i].TryStep(step, out var next) && seen.Add(next))
-                {
-                    states.Add(next);
-                }
-            }
-        }
-
-        return states;
-    }
 }

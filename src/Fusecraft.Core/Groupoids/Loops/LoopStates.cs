@@ -1,5 +1,4 @@
 using System.Numerics;
-using System.Runtime.InteropServices;
 using Fusecraft.Permutations;
 
 namespace Fusecraft.Groupoids;
@@ -13,11 +12,10 @@ internal sealed class LoopStates<T>
 {
     private readonly ArcTable _arcs;
     private readonly PackedPermutations<T> _labels;
-    private readonly PackedPermutations<T> _rows;
+    private readonly PermutationIndex<T> _rows;
     private readonly List<(int Vertex, int Parent, ushort Label)> _states = [];
     private readonly List<int> _levels = [0];
     private readonly T[] _next;
-    private int[] _table = new int[1 << 10];
 
     /// <param name="root">The vertex of the base shape.</param>
     /// <param name="arcs">The arcs to follow.</param>
@@ -26,7 +24,7 @@ internal sealed class LoopStates<T>
     {
         _arcs = arcs;
         _labels = labels;
-        _rows = new PackedPermutations<T>(labels.Stride, 1 << 8);
+        _rows = new PermutationIndex<T>(labels.Stride);
         _next = new T[labels.Stride];
         Lanes.Identity<T>(_next);
         TryAdd(root, -1, 0);
@@ -82,42 +80,12 @@ internal sealed class LoopStates<T>
     // The permutation tells the shape, so it alone tells states apart.
     private bool TryAdd(int vertex, int parent, ushort label)
     {
-        var at = Slot(_next);
-        if (_table[at] != 0)
+        if (!_rows.TryAdd(_next, out _))
         {
             return false;
         }
 
-        _rows.Add(_next);
         _states.Add((vertex, parent, label));
-        _table[at] = Count;
-        if (2 * Count > _table.Length)
-        {
-            _table = new int[2 * _table.Length];
-            for (var state = 0; state < Count; state++)
-            {
-                _table[Slot(_rows[state])] = state + 1;
-            }
-        }
-
         return true;
-    }
-
-    private int Slot(ReadOnlySpan<T> row)
-    {
-        var hash = 0UL;
-        foreach (var word in MemoryMarshal.Cast<T, ulong>(row))
-        {
-            hash = (hash ^ word) * 0x9E37_79B9_7F4A_7C15;
-            hash ^= hash >> 32;
-        }
-
-        var at = (int)(hash & (ulong)(_table.Length - 1));
-        while (_table[at] != 0 && !_rows[_table[at] - 1].SequenceEqual(row))
-        {
-            at = (at + 1) & (_table.Length - 1);
-        }
-
-        return at;
     }
 }

@@ -131,10 +131,11 @@ internal sealed class AxisChoice
             [.. turns.Select((turn, i) => isWhole(i) ? turn : turn.Power(power)).Where(permutation => !permutation.IsIdentity)];
     }
 
-    private static string Partition(int[] colours, MechanismSymmetry? symmetry)
+    /// <summary>Which labels look alike, as seen through a symmetry: site by site the first site of the same colour.</summary>
+    public static string Partition(IReadOnlyList<int> colours, MechanismSymmetry? symmetry)
     {
         var first = new Dictionary<int, int>();
-        return string.Join(' ', Enumerable.Range(0, colours.Length).Select(site =>
+        return string.Join(' ', Enumerable.Range(0, colours.Count).Select(site =>
         {
             var colour = colours[symmetry?.Sites[site] ?? site];
             first.TryAdd(colour, site);

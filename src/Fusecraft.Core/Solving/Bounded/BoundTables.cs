@@ -26,7 +26,7 @@ internal sealed class BoundTables
             foreach (var table in tables.OrderByDescending(table => table.Mean))
             {
                 // A symmetry that takes the colourings to themselves, whatever the colours, gives the same bounds again.
-                if (_readings.Count < MostReadings && parts.Add($"{Partition(table.First, symmetry)}|{(table.Second is null ? "" : Partition(table.Second, symmetry))}"))
+                if (_readings.Count < MostReadings && parts.Add($"{AxisChoice.Partition(table.First.ColourOfLabel, symmetry)}|{(table.Second is null ? "" : AxisChoice.Partition(table.Second.ColourOfLabel, symmetry))}"))
                 {
                     _readings.Add(new Reading(table, Add(table.First, symmetry), table.Second is null ? -1 : Add(table.Second, symmetry)));
                 }
@@ -112,19 +112,6 @@ internal sealed class BoundTables
             var image = classes[symmetry.Image(step).Index];
             return !images.TryAdd(classes[step.Index], image) ? images[classes[step.Index]] == image : images.Values.Count(other => other == image) == 1;
         });
-    }
-
-    // Which labels look alike, as seen through a symmetry: site by site the first site of the same colour.
-    private static string Partition(CosetCoordinates coordinates, MechanismSymmetry? symmetry)
-    {
-        var colours = coordinates.ColourOfLabel;
-        var first = new Dictionary<int, int>();
-        return string.Join(' ', Enumerable.Range(0, colours.Length).Select(site =>
-        {
-            var colour = colours[symmetry?.Sites[site] ?? site];
-            first.TryAdd(colour, site);
-            return first[colour];
-        }));
     }
 
     private static int Lexicographic(Permutation one, Permutation other)

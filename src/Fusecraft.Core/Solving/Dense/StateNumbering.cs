@@ -21,6 +21,7 @@ public sealed class StateNumbering
     private readonly Lazy<RowTable> _steps;
     private readonly long _order;
     private readonly Permutation _base;
+    private readonly Permutation _back;
 
     private StateNumbering(VertexGroup group)
     {
@@ -29,6 +30,7 @@ public sealed class StateNumbering
         _order = (long)group.Order;
         Digits = StateDigits.Create(_region, group.Group.Chain);
         _base = group.Groupoid.PathTo(group.BaseShape).Permutation;
+        _back = _base.Inverse();
         _steps = new Lazy<RowTable>(() => Tabulate(MoveSet.Of(_region, Metric.Step, default), group.Groupoid.DegreeOfParallelism, default));
     }
 
@@ -81,7 +83,7 @@ public sealed class StateNumbering
         }
 
         var place = state.Shape is null ? -1 : _region.PlaceOf(Group.Groupoid.IndexOf(state.Shape));
-        var number = place < 0 ? -1 : Digits.Rank(place, _base.Inverse() * state.Labels);
+        var number = place < 0 ? -1 : Digits.Rank(place, _back * state.Labels);
         return number < 0 ? -1 : (place * _order) + number;
     }
 

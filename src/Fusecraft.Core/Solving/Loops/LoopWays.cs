@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using System.Numerics;
-using System.Runtime.InteropServices;
 using Fusecraft.Mechanisms;
 using Fusecraft.Permutations;
 
@@ -21,14 +20,13 @@ internal sealed class LoopWays<T>
     private readonly int[] _weights;
     private readonly bool _isRun;
     private readonly PackedPermutations<T> _stepRows;
-    private readonly PackedPermutations<T> _rows;
+    private readonly PermutationIndex<T> _rows;
     private readonly List<Way> _ways = [];
     private readonly List<List<int>> _levels = [];
     private readonly List<List<int>> _waiting = [];
     private readonly T[] _next;
     private readonly ulong[] _key;
     private readonly Dictionary<(int Shape, int Step), int> _targets = [];
-    private int[] _table = new int[1 << 10];
 
     /// <param name="shape">Where the ways start or end.</param>
     /// <param name="metric">What a step costs.</param>
@@ -51,7 +49,7 @@ internal sealed class LoopWays<T>
             (isBack ? step.Permutation.Inverse() : step.Permutation).CopyLanes(_stepRows.AddRow());
         }
 
-        _rows = new PackedPermutations<T>(stride, 1 << 8);
+        _rows = new PermutationIndex<T>(stride);
         _next = new T[stride];
         _key = new ulong[_mechanism.Board.Words];
         Lanes.Identity<T>(_next);
@@ -180,26 +178,15 @@ internal sealed class LoopWays<T>
     // Takes _next as a way, unless one at most as dear is known.
     private void Offer(int shape, int parent, Step[] link, int cost)
     {
-        var at = Slot(_next);
-        if (_table[at] == 0)
+        if (_rows.TryAdd(_next, out var way))
         {
-            _rows.Add(_next);
             _ways.Add(new Way(shape, parent, link, cost, false));
-            _table[at] = Count;
-            Wait(Count - 1, cost);
-            if (2 * Count > _table.Length)
-            {
-                _table = new int[2 * _table.Length];
-                for (var way = 0; way < Count; way++)
-                {
-                    _table[Slot(_rows[way])] = way + 1;
-                }
-            }
+            Wait(way, cost);
         }
-        else if (_ways[_table[at] - 1] is { IsDone: false } known && known.Cost > cost)
+        else if (_ways[way] is { IsDone: false } known && known.Cost > cost)
         {
-            _ways[_table[at] - 1] = new Way(shape, parent, link, cost, false);
-            Wait(_table[at] - 1, cost);
+            _ways[way] = new Way(shape, parent, link, cost, false);
+            Wait(way, cost);
         }
     }
 
@@ -239,24 +226,6 @@ internal sealed class LoopWays<T>
 
         _targets.Add((shape, step.Index), target);
         return target;
-    }
-
-    private int Slot(ReadOnlySpan<T> row)
-    {
-        var hash = 0UL;
-        foreach (var word in MemoryMarshal.Cast<T, ulong>(row))
-        {
-            hash = (hash ^ word) * 0x9E37_79B9_7F4A_7C15;
-            hash ^= hash >> 32;
-        }
-
-        var at = (int)(hash & (ulong)(_table.Length - 1));
-        while (_table[at] != 0 && !_rows[_table[at] - 1].SequenceEqual(row))
-        {
-            at = (at + 1) & (_table.Length - 1);
-        }
-
-        return at;
     }
 
     private readonly record struct Way(int Shape, int Parent, Step[] Link, int Cost, bool IsDone);

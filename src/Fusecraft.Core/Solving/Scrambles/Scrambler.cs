@@ -1,5 +1,5 @@
+using System.Numerics;
 using Fusecraft.Groupoids;
-using Fusecraft.Groups;
 using Fusecraft.Mechanisms;
 using Fusecraft.Permutations;
 
@@ -46,7 +46,7 @@ public sealed class Scrambler
     public ScrambleOptions Options { get; }
 
     /// <summary>The number of states that are drawn from.</summary>
-    public System.Numerics.BigInteger StateCount { get; }
+    public BigInteger StateCount { get; }
 
     /// <summary>Makes ready to draw states of a mechanism: explores it, and makes a distance table where distances are asked for.</summary>
     /// <param name="mechanism">The mechanism.</param>
@@ -72,7 +72,7 @@ public sealed class Scrambler
         return options.LeastDistance <= table.Greatest && options.LeastDistance <= (options.GreatestDistance ?? int.MaxValue)
             ? new Scrambler(group, options, table)
             : throw new ArgumentException(
-                $"No state of {mechanism.Name} is at a distance of {options.LeastDistance} to {options.GreatestDistance?.ToString(System.Globalization.CultureInfo.InvariantCulture) ?? "any number of"} {options.Metric}s; the greatest is {table.Greatest}.", nameof(options));
+                $"No state of {mechanism.Name} is at a distance of at least {options.LeastDistance}{(options.GreatestDistance is { } most ? $" and at most {most}" : "")}; the greatest is {table.Greatest}.", nameof(options));
     }
 
     /// <summary>Draws a state.</summary>

@@ -29,7 +29,7 @@ internal static class PieceStages
             return null;
         }
 
-        var harvest = new LoopHarvest(mechanism, whole, cancellation);
+        var harvest = new StageLoops(mechanism, whole, cancellation);
         var stages = new List<Stage>();
         StageMove[] moves = [.. whole.Moves.Select(signs.Signed)];
         var frame = StageFrame.Explore(vertexGroup.Groupoid, vertexGroup.BaseShape, moves, whole.ShapeCount, cancellation, signs.Count)!;

@@ -211,7 +211,7 @@ public sealed partial class DistanceTable
             var counts = Enumerable.Range(0, Int(_bytes, 60)).Select(i => BinaryPrimitives.ReadInt64LittleEndian(_bytes.AsSpan(HeaderBytes + (8 * i))));
             if (!ReferenceEquals(forward, descent))
             {
-                return new DistanceTable(numbering, options, descent, rows, null, new WideTable(memory, CellBits / 8), counts);
+                return new DistanceTable(numbering, options, descent, rows, null, new WideTable(memory, CellBits / 8), counts, options.Origin == DistanceOrigin.FromBase);
             }
 
             if (rows.RowStates != Int(_bytes, 56))
@@ -219,7 +219,7 @@ public sealed partial class DistanceTable
                 throw new InvalidDataException("The table file orders its states in rows of another length; it must be made anew.");
             }
 
-            return new DistanceTable(numbering, options, descent, rows, new ResidueTable(rows.RowCount, rows.RowStates, memory), null, counts);
+            return new DistanceTable(numbering, options, descent, rows, new ResidueTable(rows.RowCount, rows.RowStates, memory), null, counts, options.Origin == DistanceOrigin.FromBase);
         }
 
         private static InvalidDataException Damaged() => new("The table file is damaged: what it says cannot be.");

@@ -31,9 +31,9 @@ public sealed partial class DistanceTable
         }
 
         var moves = new List<Move>();
-        while (distance > 0 || HasFreeMoves)
+        while (distance > 0 || _hasFreeMoves)
         {
-            if (HasFreeMoves && !TryGoFreely(ref number, distance, moves))
+            if (_hasFreeMoves && !TryGoFreely(ref number, distance, moves))
             {
                 break;
             }
@@ -101,7 +101,7 @@ public sealed partial class DistanceTable
             return BigInteger.Zero;
         }
 
-        if (HasFreeMoves)
+        if (_hasFreeMoves)
         {
             throw new InvalidOperationException("Moves of cost 0 can be done over and over, so shortest paths cannot be counted in this metric.");
         }
@@ -221,9 +221,7 @@ public sealed partial class DistanceTable
         throw new InvalidOperationException("The distances of the table do not fit together.");
     }
 
-    private bool HasFreeMoves => _moves.Moves.Any(move => move.Cost == 0);
-
-    private bool IsStart(long number) => _leadsToBase || Origin == DistanceOrigin.FromBase ? number == 0 : GoalStates.Contains(Numbering.Unrank(number));
+    private bool IsStart(long number) => _startsAtBase ? number == 0 : GoalStates.Contains(Numbering.Unrank(number));
 
     private IEnumerable<(int Slot, long State)> NearerMoves(long number, int distance)
     {

@@ -18,10 +18,11 @@ public sealed partial class DistanceTable : IDisposable
     private readonly ResidueTable? _residues;
     private readonly WideTable? _wide;
     private readonly long _order;
-    private bool _leadsToBase;
+    private readonly bool _startsAtBase;
+    private readonly bool _hasFreeMoves;
 
     // The moves lead towards the states of distance 0.
-    private DistanceTable(StateNumbering numbering, DistanceOptions options, MoveSet moves, RowTable rows, ResidueTable? residues, WideTable? wide, IEnumerable<long> counts)
+    private DistanceTable(StateNumbering numbering, DistanceOptions options, MoveSet moves, RowTable rows, ResidueTable? residues, WideTable? wide, IEnumerable<long> counts, bool startsAtBase)
     {
         Numbering = numbering;
         Metric = options.Metric;
@@ -32,6 +33,8 @@ public sealed partial class DistanceTable : IDisposable
         _wide = wide;
         _order = (long)numbering.Group.Order;
         Counts = [.. counts];
+        _startsAtBase = startsAtBase;
+        _hasFreeMoves = moves.Moves.Any(move => move.Cost == 0);
     }
 
     /// <summary>The numbering of the states.</summary>
@@ -79,33 +82,30 @@ public sealed partial class DistanceTable : IDisposable
                 $"A table of the {numbering.Count} states of {numbering.Mechanism.Name} takes about {needed} bytes; {options.MaxBytes} are allowed.");
         }
 
-        return Build(numbering, options, options.Origin == DistanceOrigin.FromBase ? [0L] : GoalStates.Of(numbering), progress, cancellationToken);
+        return Build(numbering, options, options.Origin == DistanceOrigin.FromBase, progress, cancellationToken);
     }
 
     /// <summary>A table of the distances to the base state, whatever the goal.</summary>
-    internal static DistanceTable BuildToBase(StateNumbering numbering, DistanceOptions options, CancellationToken cancellation)
-    {
-        var table = Build(numbering, options with { Origin = DistanceOrigin.ToGoal }, [0L], null, cancellation);
-        table._leadsToBase = true;
-        return table;
-    }
+    internal static DistanceTable BuildToBase(StateNumbering numbering, DistanceOptions options, CancellationToken cancellation) =>
+        Build(numbering, options with { Origin = DistanceOrigin.ToGoal }, startsAtBase: true, null, cancellation);
 
     private static DistanceTable Build(
-        StateNumbering numbering, DistanceOptions options, IEnumerable<long> starts, IProgress<DistanceProgress>? progress, CancellationToken cancellationToken)
+        StateNumbering numbering, DistanceOptions options, bool startsAtBase, IProgress<DistanceProgress>? progress, CancellationToken cancellationToken)
     {
+        var starts = startsAtBase ? [0L] : GoalStates.Of(numbering);
         var (forward, descent) = Moves(numbering, options, cancellationToken);
         var along = numbering.Tabulate(forward, options.DegreeOfParallelism, cancellationToken);
         if (ReferenceEquals(forward, descent))
         {
             var (table, counts) = ResidueSearch.Run(along, starts, options.DegreeOfParallelism, progress, cancellationToken);
-            return new DistanceTable(numbering, options, descent, along, table, null, counts);
+            return new DistanceTable(numbering, options, descent, along, table, null, counts, startsAtBase);
         }
 
         var (wide, wideCounts) =
             WideSearch<byte>.Run(along, forward, numbering.ShapeCount, starts, options.DegreeOfParallelism, progress, cancellationToken)
             ?? WideSearch<ushort>.Run(along, forward, numbering.ShapeCount, starts, options.DegreeOfParallelism, progress, cancellationToken)
             ?? throw new InvalidOperationException($"A distance is above {ushort.MaxValue - 1}, the greatest that a table holds.");
-        return new DistanceTable(numbering, options, descent, numbering.Tabulate(descent, options.DegreeOfParallelism, cancellationToken), null, wide, wideCounts);
+        return new DistanceTable(numbering, options, descent, numbering.Tabulate(descent, options.DegreeOfParallelism, cancellationToken), null, wide, wideCounts, startsAtBase);
     }
 
     /// <summary>The memory that a table is expected to take with what it needs besides, in bytes.</summary>

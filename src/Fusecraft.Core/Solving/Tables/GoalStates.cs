@@ -53,7 +53,8 @@ internal static class GoalStates
         }
     }
 
-    internal static ulong[]? MarkMask(Mechanism mechanism) => mechanism.Board.MaskOf(
+    /// <summary>The slots of the marks that the goal asks for; null where one can never be there.</summary>
+    public static ulong[]? MarkMask(Mechanism mechanism) => mechanism.Board.MaskOf(
         mechanism.Goal.Names.Select(name => (name[..name.IndexOf('@', StringComparison.Ordinal)], mechanism.FindSite(name[(name.IndexOf('@', StringComparison.Ordinal) + 1)..])!.Value)));
 
     private static bool IsHome(StateNumbering numbering, int place) => numbering.Group.Groupoid.ShapeAt(numbering.Region.ShapeAt(place)) == numbering.Mechanism.Home;
@@ -72,7 +73,8 @@ internal static class GoalStates
         }
     }
 
-    internal static bool Covers(ReadOnlySpan<ulong> key, ulong[] mask)
+    /// <summary>True when a shape has all slots of a mask.</summary>
+    public static bool Covers(ReadOnlySpan<ulong> key, ulong[] mask)
     {
         for (var i = 0; i < mask.Length; i++)
         {

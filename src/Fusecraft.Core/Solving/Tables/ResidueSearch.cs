@@ -136,6 +136,32 @@ internal sealed class ResidueSearch
         return total;
     }
 
+    /// <summary>The bytes that hold a bit for each state of a word.</summary>
+    private interface IByteCount
+    {
+        static abstract uint Count { get; }
+    }
+
+    private readonly struct One : IByteCount
+    {
+        public static uint Count => 1;
+    }
+
+    private readonly struct Two : IByteCount
+    {
+        public static uint Count => 2;
+    }
+
+    private readonly struct Three : IByteCount
+    {
+        public static uint Count => 3;
+    }
+
+    private readonly struct Four : IByteCount
+    {
+        public static uint Count => 4;
+    }
+
     /// <summary>Makes a level for some rows, with memory of its own.</summary>
     private sealed class RowPuller
     {
@@ -204,67 +230,45 @@ internal sealed class ResidueSearch
                 _search._table.CopyBits(source, _lastCode, _source);
                 switch (_moves.WordBytes)
                 {
-                    case 1: AddOneByte(_moves.WordMap(row, slot)); break;
-                    case 2: AddTwoBytes(_moves.WordMap(row, slot)); break;
-                    default: AddBytes(_moves.WordMap(row, slot)); break;
+                    case 1: Add<One>(_moves.WordMap(row, slot)); break;
+                    case 2: Add<Two>(_moves.WordMap(row, slot)); break;
+                    case 3: Add<Three>(_moves.WordMap(row, slot)); break;
+                    default: Add<Four>(_moves.WordMap(row, slot)); break;
                 }
             }
 
             return any;
         }
 
+        // The number of bytes is a constant of the compiled code, so what a shorter word does not need is not there.
         [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-        private void AddOneByte(ReadOnlySpan<uint> map)
-        {
-            ref var source = ref Unsafe.As<uint, byte>(ref MemoryMarshal.GetArrayDataReference(_source));
-            ref var gather = ref MemoryMarshal.GetReference(_moves.Gather);
-            ref var words = ref MemoryMarshal.GetArrayDataReference(_words);
-            var mask = (1u << _moves.WordStates) - 1;
-            for (var i = 0; i < map.Length; i++)
-            {
-                var entry = map[i];
-                var first = entry >> 5;
-                var bits = (Unsafe.ReadUnaligned<uint>(ref Unsafe.Add(ref source, first >> 3)) >> (int)(first & 7)) & mask;
-                Unsafe.Add(ref words, i) |= Unsafe.Add(ref gather, ((entry & 31) << 8) + bits);
-            }
-        }
-
-        [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-        private void AddTwoBytes(ReadOnlySpan<uint> map)
-        {
-            ref var source = ref Unsafe.As<uint, byte>(ref MemoryMarshal.GetArrayDataReference(_source));
-            ref var gather = ref MemoryMarshal.GetReference(_moves.Gather);
-            ref var words = ref MemoryMarshal.GetArrayDataReference(_words);
-            var mask = (1u << _moves.WordStates) - 1;
-            for (var i = 0; i < map.Length; i++)
-            {
-                var entry = map[i];
-                var first = entry >> 5;
-                var bits = (Unsafe.ReadUnaligned<uint>(ref Unsafe.Add(ref source, first >> 3)) >> (int)(first & 7)) & mask;
-                ref var table = ref Unsafe.Add(ref gather, (entry & 31) << 9);
-                Unsafe.Add(ref words, i) |= Unsafe.Add(ref table, bits & 255) | Unsafe.Add(ref table, 256 + (bits >> 8));
-            }
-        }
-
-        [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-        private void AddBytes(ReadOnlySpan<uint> map)
+        private void Add<TBytes>(ReadOnlySpan<uint> map)
+            where TBytes : struct, IByteCount
         {
             ref var source = ref Unsafe.As<uint, byte>(ref MemoryMarshal.GetArrayDataReference(_source));
             ref var gather = ref MemoryMarshal.GetReference(_moves.Gather);
             ref var words = ref MemoryMarshal.GetArrayDataReference(_words);
             var mask = (1ul << _moves.WordStates) - 1;
-            var bytes = (uint)_moves.WordBytes;
             for (var i = 0; i < map.Length; i++)
             {
                 var entry = map[i];
                 var first = entry >> 5;
                 var bits = (Unsafe.ReadUnaligned<ulong>(ref Unsafe.Add(ref source, first >> 3)) >> (int)(first & 7)) & mask;
-                ref var table = ref Unsafe.Add(ref gather, ((entry & 31) * bytes) << 8);
+                ref var table = ref Unsafe.Add(ref gather, ((entry & 31) * TBytes.Count) << 8);
                 var word = Unsafe.Add(ref table, (uint)bits & 255);
-                for (var part = 1u; part < bytes; part++)
+                if (TBytes.Count > 1)
                 {
-                    bits >>= 8;
-                    word |= Unsafe.Add(ref table, (part << 8) + ((uint)bits & 255));
+                    word |= Unsafe.Add(ref table, 256 + (((uint)bits >> 8) & 255));
+                }
+
+                if (TBytes.Count > 2)
+                {
+                    word |= Unsafe.Add(ref table, 512 + (((uint)bits >> 16) & 255));
+                }
+
+                if (TBytes.Count > 3)
+                {
+                    word |= Unsafe.Add(ref table, 768 + ((uint)bits >> 24));
                 }
 
                 Unsafe.Add(ref words, i) |= word;

@@ -127,6 +127,7 @@ internal sealed class WideSearch<T>
         var sought = T.CreateTruncating(distance);
         var next = T.CreateTruncating(distance + cost);
         var states = Row(row);
+        var place = row / _rowsAShape;
         var count = 0;
         for (var at = states.IndexOf(sought); at >= 0;)
         {
@@ -134,7 +135,7 @@ internal sealed class WideSearch<T>
             for (var slot = 0; slot < _table.Slots; slot++)
             {
                 var target = _table.TargetRow(row, slot);
-                if (target >= 0 && _moves.MoveAt(row / _rowsAShape, slot).Cost == cost)
+                if (target >= 0 && _moves.MoveAt(place, slot).Cost == cost)
                 {
                     ref var other = ref _distances.At<T>(((long)target * _table.RowStates) + _table.After(row, at, slot));
                     if (other > next)

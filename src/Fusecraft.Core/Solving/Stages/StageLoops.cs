@@ -5,7 +5,7 @@ using Fusecraft.Permutations;
 namespace Fusecraft.Solving;
 
 /// <summary>Short loops at the base shape that leave some labels where they are: two short words that take those labels to the same places, the first one followed by the other one undone.</summary>
-internal sealed class LoopHarvest
+internal sealed class StageLoops
 {
     /// <summary>The number of words that loops are made from.</summary>
     private const int BallSize = 300_000;
@@ -27,7 +27,7 @@ internal sealed class LoopHarvest
     private readonly ShortBall _ball;
     private readonly CancellationToken _cancellation;
 
-    public LoopHarvest(Mechanism mechanism, StageFrame whole, CancellationToken cancellation)
+    public StageLoops(Mechanism mechanism, StageFrame whole, CancellationToken cancellation)
     {
         _mechanism = mechanism;
         _ball = new ShortBall(whole, 0, BallSize);
